@@ -1,0 +1,1 @@
+#include "advise/reach.hpp"

@@ -1,0 +1,1 @@
+#include "audit/audit.hpp"

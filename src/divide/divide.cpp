@@ -1,0 +1,1 @@
+#include "divide/divide.hpp"

@@ -1,0 +1,1 @@
+#include "flatten/flatten.hpp"

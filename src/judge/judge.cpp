@@ -1,0 +1,1 @@
+#include "judge/judge.hpp"

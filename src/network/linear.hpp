@@ -1,0 +1,36 @@
+// Closed-form solutions of linear networks by modified nodal analysis (Ho, Ruehli, Brennan 1975). Nonlinear branches (Device,
+// Behavioural) are left open here: on a network that has any, results describe its linear part only.
+#pragma once
+
+#include <span>
+#include <vector>
+
+#include "base/result.hpp"
+#include "model/network.hpp"
+#include "model/plan.hpp"
+
+namespace network {
+
+using Overrides = std::span<const model::Override>;
+
+// Volts of every node against ground, [0] = 0, with `overrides` in place of the branches' own values. A Number that is
+// neither fixed nor overridden is a bug. Capacitors and Unmodelled are open; inductors and zero ohms are shorts.
+// Error: the network has no single solution (a node floats, sources fight); the message names no nodes.
+[[nodiscard]] base::Result<std::vector<double>> node_volts(const model::Network& network, Overrides overrides = {});
+
+// The one-port form of probe against ground with the Resistor branch `resistor` left free. Error: no finite, non-zero source
+// resistance (fed by a current source, shorted by a rail), or no solution with the branch open.
+[[nodiscard]] base::Result<model::OnePort> one_port(const model::Network& network, model::BranchId resistor, model::NodeId probe,
+                                                    Overrides overrides = {});
+
+// Thevenin resistance seen between two nodes, sources at rest; `without` is taken out of the network first (none: nothing is).
+[[nodiscard]] base::Result<double> thevenin_ohms(const model::Network& network, model::NodeId plus, model::NodeId minus,
+                                                 model::BranchId without = {}, Overrides overrides = {});
+
+// The value of a one-port form at `ohms`; infinite ohms is the open circuit.
+[[nodiscard]] double volts_at(const model::OnePort& form, double ohms);
+
+// The sensor's resistance from a voltage, the inverse of volts_at; not a number where there is none.
+[[nodiscard]] double ohms_at(const model::OnePort& form, double volts);
+
+}  // namespace network

@@ -1,0 +1,1 @@
+#include "parse/quantity.hpp"

@@ -1,0 +1,1 @@
+#include "report/json.hpp"

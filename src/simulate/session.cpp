@@ -1,0 +1,1 @@
+#include "simulate/session.hpp"
