@@ -9,9 +9,12 @@ enum class Level : unsigned char { note, warning, error };
 
 [[nodiscard]] constexpr std::string_view level_text(Level level) {
   switch (level) {
-    case Level::note: return "note";
-    case Level::warning: return "warning";
-    case Level::error: return "error";
+    case Level::note:
+      return "note";
+    case Level::warning:
+      return "warning";
+    case Level::error:
+      return "error";
   }
   return "error";
 }

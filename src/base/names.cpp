@@ -8,7 +8,9 @@
 namespace base {
 namespace {
 
-constexpr char fold(char c) { return c >= 'A' && c <= 'Z' ? static_cast<char>(c + ('a' - 'A')) : c; }
+constexpr char fold(char c) {
+  return c >= 'A' && c <= 'Z' ? static_cast<char>(c + ('a' - 'A')) : c;
+}
 
 // FNV-1a over the folded bytes, with a last mix because the low bits choose the slot.
 std::uint32_t hash_of(std::string_view text) {
@@ -24,7 +26,8 @@ constexpr std::size_t block_bytes = std::size_t{1} << 16;
 }  // namespace
 
 bool same_name(std::string_view a, std::string_view b) {
-  return a.size() == b.size() && std::equal(a.begin(), a.end(), b.begin(), [](char x, char y) { return fold(x) == fold(y); });
+  return a.size() == b.size() &&
+         std::equal(a.begin(), a.end(), b.begin(), [](char x, char y) { return fold(x) == fold(y); });
 }
 
 std::string folded(std::string_view text) {
@@ -142,7 +145,7 @@ std::size_t edit_distance(std::string_view a, std::string_view b) {
 
 std::string_view nearest_name(std::string_view wanted, const std::vector<std::string_view>& candidates) {
   constexpr std::size_t longest = 200;  // a name longer than this is no slip of the pen
-  if (wanted.size() > longest) return {};
+  if (wanted.empty() || wanted.size() > longest) return {};
   std::size_t best = wanted.size() < 4 ? 1 : 1 + wanted.size() / 3;
   std::string_view found;
   for (const std::string_view candidate : candidates) {

@@ -17,8 +17,8 @@ struct Error {
 template <class T>
 class [[nodiscard]] Result {
  public:
-  Result(T value) : state_(std::in_place_index<0>, std::move(value)) {}          // NOLINT: converts on purpose
-  Result(Error error) : state_(std::in_place_index<1>, std::move(error)) {}      // NOLINT: converts on purpose
+  Result(T value) : state_(std::in_place_index<0>, std::move(value)) {}      // NOLINT: converts on purpose
+  Result(Error error) : state_(std::in_place_index<1>, std::move(error)) {}  // NOLINT: converts on purpose
 
   [[nodiscard]] bool ok() const { return state_.index() == 0; }
   explicit operator bool() const { return ok(); }

@@ -4,7 +4,6 @@
 #include <cmath>
 #include <cstdint>
 #include <cstdlib>
-
 #include <fmt/format.h>
 
 namespace base {
@@ -41,23 +40,34 @@ std::size_t utf8_length(std::string_view text, std::size_t at, std::uint32_t& po
 bool is_control(std::uint32_t point) {
   if (point < 0x20U || (point >= 0x7FU && point < 0xA0U)) return true;
   return point == 0x061CU || (point >= 0x200BU && point <= 0x200FU) || (point >= 0x2028U && point <= 0x202EU) ||
-         (point >= 0x2066U && point <= 0x2069U) || point == 0xFEFFU;
+         (point >= 0x2060U && point <= 0x206FU) || point == 0xFEFFU || (point >= 0xE0000U && point <= 0xE007FU);
+}
+
+bool continues(char c) {
+  return (static_cast<unsigned char>(c) & 0xC0U) == 0x80U;
+}
+
+// A prefix and a unit behind a number, if there is any.
+std::string with_unit(std::string number, std::string_view prefix, std::string_view unit) {
+  if (!prefix.empty() || !unit.empty()) number.append(" ").append(prefix).append(unit);
+  return number;
 }
 
 }  // namespace
 
 std::string si_text(double value, std::string_view unit, int digits) {
-  if (!std::isfinite(value)) return fmt::format("{} {}", value, unit);
-  if (value == 0) return fmt::format("0 {}", unit);
-  // Round first: 999.96 with four digits is 1 k, not 1000.
-  const double rounded = std::strtod(fmt::format("{:.{}e}", value, digits - 1).c_str(), nullptr);
-  const int group = static_cast<int>(std::floor(std::log10(std::fabs(rounded)) / 3 + 1e-12));
+  if (!std::isfinite(value)) return with_unit(fmt::format("{}", value), "", unit);
+  if (value == 0) return with_unit("0", "", unit);
+  // Rounded first, and the exponent read from the rounded text: 999.96 with four digits is 1 k, not 1000.
+  const std::string scientific = fmt::format("{:.{}e}", value, digits - 1);
+  const int exponent = std::atoi(scientific.c_str() + scientific.find('e') + 1);
+  const int group = exponent >= 0 ? exponent / 3 : -((2 - exponent) / 3);
   const int index = group - first_exponent / 3;
-  if (index < 0 || index >= static_cast<int>(prefixes.size())) return fmt::format("{:.{}e} {}", value, digits - 1, unit);
-  const double scaled = rounded / std::pow(10.0, 3 * group);
+  if (index < 0 || index >= static_cast<int>(prefixes.size())) return with_unit(scientific, "", unit);
+  const double scaled = std::strtod(scientific.c_str(), nullptr) / std::pow(10.0, 3 * group);
   const int before = std::fabs(scaled) >= 100 ? 3 : std::fabs(scaled) >= 10 ? 2 : 1;
   const int decimals = digits > before ? digits - before : 0;
-  return fmt::format("{} {}{}", trimmed(fmt::format("{:.{}f}", scaled, decimals)), prefixes[static_cast<std::size_t>(index)], unit);
+  return with_unit(trimmed(fmt::format("{:.{}f}", scaled, decimals)), prefixes[static_cast<std::size_t>(index)], unit);
 }
 
 std::string number_text(double value, int digits) {
@@ -90,9 +100,12 @@ std::string printable(std::string_view text) {
 
 std::string printable_short(std::string_view text, std::size_t most) {
   if (text.size() <= most) return printable(text);
-  const std::size_t head = most * 2 / 3;
-  const std::size_t tail = most - head;
-  return printable(text.substr(0, head)) + "..." + printable(text.substr(text.size() - tail));
+  std::size_t head = most * 2 / 3;
+  std::size_t tail = text.size() - (most - head);
+  // A character has at most three bytes after its first: a longer run is junk and may be cut anywhere.
+  for (int i = 0; i < 3 && head > 0 && continues(text[head]); ++i) --head;
+  for (int i = 0; i < 3 && tail < text.size() && continues(text[tail]); ++i) ++tail;
+  return printable(text.substr(0, head)) + "..." + printable(text.substr(tail));
 }
 
 }  // namespace base

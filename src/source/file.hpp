@@ -9,12 +9,15 @@
 
 namespace source {
 
-// The bytes of a regular file that the user named. Errors: not there, not a regular file, unreadable, larger than the limit.
+// The bytes of a regular file that the user named. Errors: not there, not a regular file, unreadable, larger than the
+// limit.
 [[nodiscard]] base::Result<std::string> read_file(const std::filesystem::path& path, const Limits& limits);
 
 // Where `wanted`, written in a file of folder `from`, leads: an existing regular file below `root` once links are
-// resolved. Backslashes count as slashes. Errors: nothing there; outside the root; not a regular file.
-[[nodiscard]] base::Result<std::filesystem::path> resolve_below(const std::filesystem::path& root, const std::filesystem::path& from,
+// resolved. Backslashes count as slashes; an empty folder is the current one. Errors: nothing there; outside the root;
+// not a regular file.
+[[nodiscard]] base::Result<std::filesystem::path> resolve_below(const std::filesystem::path& root,
+                                                                const std::filesystem::path& from,
                                                                 const std::string& wanted);
 
 }  // namespace source
