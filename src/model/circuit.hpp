@@ -2,6 +2,7 @@
 #pragma once
 
 #include <cstdint>
+#include <limits>
 #include <string>
 #include <variant>
 #include <vector>
@@ -112,6 +113,8 @@ struct SweptParameter {
   base::NameId parameter;
   InstanceId instance;     // whose parameter it is; none: a .param of the top level
   bool found = false;      // whether any such parameter exists
+  std::uint32_t variable = 0;  // the index of its Op::variable nodes: its own, or that of the first request for the same parameter
+  double nominal = std::numeric_limits<double>::quiet_NaN();  // its value in the netlist; NaN: it has none, or one that is itself swept
 };
 
 struct Circuit {

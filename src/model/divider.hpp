@@ -53,6 +53,7 @@ struct TapCandidate {
   NetId net;
   double weight_volts = 0;  // how far the pin moves, at most over the sweep, when its off-walk branches go
   bool arm = false;
+  bool declared = false;    // a declared role settled it
   std::vector<PartName> branches;
 };
 
@@ -74,7 +75,7 @@ struct ProbedNetwork {
   NodeId low;                      // of the converter's range, where it is a net; else none
   NodeId high;
   std::vector<SweptBranch> swept;
-  std::vector<BranchId> leakages;  // CurrentSource branches that carry +leakage out of the pin's node; zero when nominal
+  std::vector<BranchId> leakages;  // CurrentSource branches from ground into an input's node (a positive one pushes it up); nominally 0
   std::vector<double> leakage_amperes;  // of each, the declared magnitude
   NodeId sensor_plus;              // the sensor's ends (of the element, instance or pair of nets); none for a rail
   NodeId sensor_minus;
@@ -99,6 +100,7 @@ struct Divider {
   ProbedNetwork whole;                // everything: the pin
   ProbedNetwork bare;                 // the arms alone: the tap
   std::optional<OnePort> bare_form;   // absent where the arms are not linear or the sensor sees no finite resistance
+  std::optional<OnePort> sensor_form; // the same where only the sensor itself is not linear: tells what resistance it amounts to
   std::vector<NetId> nets;            // of the whole network, rails left out
 
   std::vector<UnmodelledTouch> unmodelled;

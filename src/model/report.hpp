@@ -1,6 +1,7 @@
 // The result of a run: what every report format renders and none computes.
 #pragma once
 
+#include <map>
 #include <optional>
 #include <string>
 #include <vector>
@@ -29,6 +30,7 @@ struct BoardReport {
   FindingList findings;         // of the board as a whole
   std::vector<std::string> not_checked;  // declared, but no rule of this version looks at it
   bool done_in_whole = true;    // false: exit status 2
+  std::map<NetId, std::string> net_names;  // of every net that a divider names: tap, candidates, nets; ground is "0"
   source::Sources sources;      // the texts that places point into
 };
 

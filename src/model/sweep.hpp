@@ -40,6 +40,7 @@ struct Sweep {
   std::vector<long long> code;
   Rung rung = Rung::linear;
   bool stepped = false;
+  double alone_difference = 0;  // V at the pin, as in Solution
 };
 
 }  // namespace model
