@@ -32,18 +32,19 @@ struct Key {
 struct Law {
   std::function<double(double measurand)> ohms;
   std::function<std::optional<double>(double ohms)> measurand;  // the inverse; nothing outside the law's reach
-  double valid_from = 0;   // where the law holds
+  double valid_from = 0;                                        // where the law holds
   double valid_to = 0;
-  std::string validity;    // in words, with its source: "IEC 60751 holds from -200 to 850 degC"
+  std::string validity;  // in words, with its source: "IEC 60751 holds from -200 to 850 degC"
 };
 
 struct Kind {
   std::string_view name;       // as declared: "ntc"
   std::string_view measurand;  // "temperature"
-  std::string_view unit;       // "degC"
+  std::string_view unit;       // "degC"; from, to and accuracy are declared in it
   Moves moves = Moves::ohms;
-  bool logarithmic = false;    // default spacing of the sweep
-  std::span<const Key> keys;   // that [sensor.NAME] takes beside those common to all kinds
+  bool logarithmic = false;  // default spacing of the sweep
+  std::span<const Key>
+      keys;  // that [sensor.NAME] takes beside those of SensorDeclaration itself (`sweep` is one of these)
   // The law of these settings (all of them keys of this kind, with units checked). Error: a key is missing, a
   // combination makes no sense, a value is out of range. Null where moves is not ohms.
   base::Result<Law> (*make)(std::span<const model::SensorSetting> settings) = nullptr;
@@ -55,12 +56,14 @@ struct Kind {
 // The kind of that name, or null.
 [[nodiscard]] const Kind* find_kind(std::string_view name);
 
-// The law of a declaration whose kind moves ohms. Errors: as Kind::make; the range from..to leaves the law's validity (the
-// message says the validity).
+// The law of a declaration whose kind moves ohms. Errors: as Kind::make; the range from..to leaves the law's validity
+// (the message says the validity).
 [[nodiscard]] base::Result<Law> law_of(const model::SensorDeclaration& declaration);
 
-// `points` values from `from` to `to`, both ends exact; logarithmic needs both above zero (else an Error). One point: `from`.
-[[nodiscard]] base::Result<std::vector<double>> sweep_points(double from, double to, std::size_t points, model::Spacing spacing);
+// `points` values from `from` to `to`, both ends exact; logarithmic needs both above zero (else an Error). One point:
+// `from`.
+[[nodiscard]] base::Result<std::vector<double>> sweep_points(double from, double to, std::size_t points,
+                                                             model::Spacing spacing);
 
 // The spacing that a declaration asks for, or its kind's default.
 [[nodiscard]] model::Spacing spacing_of(const model::SensorDeclaration& declaration);
