@@ -1,0 +1,246 @@
+#include "advise/reach.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <vector>
+
+#include <catch2/catch.hpp>
+
+#include "dividers.hpp"
+#include "network/linear.hpp"
+
+using advise::best_resistor;
+using advise_test::Made;
+using network_test::node;
+
+namespace {
+
+// A 10 kohm thermistor of B 3435 from -40 to 125 degC: R25 exp(B (1/T - 1/T25)).
+std::vector<double> thermistor() {
+  std::vector<double> ohms;
+  for (int i = 0; i <= 100; ++i) ohms.push_back(10e3 * std::exp(3435 * (1 / (233.15 + 1.65 * i) - 1 / 298.15)));
+  return ohms;
+}
+
+double geometric_mean(const std::vector<double>& ohms) {
+  return std::sqrt(ohms.front() * ohms.back());
+}
+
+struct Tried {
+  double span, gap;
+};
+
+// Span and smaller gap of the pin by solving the whole network for each state: the long way round.
+Tried tried(const model::Divider& divider, model::BranchId fixed, double ohms, const std::vector<double>& sensor) {
+  double low = 1, high = 0, least = 1, most = 0;
+  for (const double sign : {0.0, 1.0, -1.0})
+    for (const double value : sensor) {
+      std::vector<model::Override> held{{fixed, ohms}, {divider.whole.swept.front().branch, value}};
+      for (std::size_t i = 0; i < divider.whole.leakages.size(); ++i)
+        held.push_back({divider.whole.leakages[i], sign * divider.whole.leakage_amperes[i]});
+      const auto volts = network::node_volts(divider.whole.network, held).value();
+      const double top = divider.whole.high.valid() ? volts[divider.whole.high.index()] : divider.input.nominal_high;
+      const double reading = volts[divider.whole.probe.index()] / top * divider.input.gain;
+      low = std::min(low, reading);
+      high = std::max(high, reading);
+      if (sign != 0) continue;
+      least = std::min(least, reading);
+      most = std::max(most, reading);
+    }
+  return {std::clamp(most, 0.0, 1.0) - std::clamp(least, 0.0, 1.0), std::min(low, 1 - high)};
+}
+
+// The largest span with the gap kept over a fine grid of the fixed resistor.
+double by_trying(const model::Divider& divider, model::BranchId fixed, double present,
+                 const std::vector<double>& sensor, double gap_limit) {
+  double best = -1;
+  for (double decade = -3; decade <= 3; decade += 2e-3) {
+    const auto at = tried(divider, fixed, present * std::pow(10, decade), {sensor.front(), sensor.back()});
+    if (at.gap >= gap_limit) best = std::max(best, at.span);
+  }
+  return best;
+}
+
+}  // namespace
+
+TEST_CASE("the best resistor of a plain divider is the geometric mean of the sensor's ends, above or below") {
+  const auto sensor = thermistor();
+  for (Made made :
+       {advise_test::sensor_below(10e3), advise_test::sensor_above(10e3), advise_test::sensor_below(1.5e6)}) {
+    const auto reach = best_resistor(made.finished(), sensor, 0).value();
+    CHECK(reach.part == "R1");
+    CHECK(reach.ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
+    const double k = std::sqrt(sensor.front() / sensor.back());
+    CHECK(reach.span_use == Approx((k - 1) / (k + 1)).epsilon(1e-12));
+  }
+}
+
+TEST_CASE("the best resistor of published ranges is their geometric mean") {
+  // Ranges of published examples (a 23k..65k sensor whose answer takes 39k, a photoresistor, a Pt100); optima computed.
+  struct Range {
+    double least, most, best;
+  };
+  for (const Range r :
+       {Range{23e3, 65e3, 38665.2}, Range{10e3, 200e3, 44721.4}, Range{600e3, 4e6, 1549193.3},
+        Range{678.417, 336103.2, 15100.26}, Range{3603, 32650, 10846.10}, Range{100, 138.5055, 117.6884}}) {
+    Made made = advise_test::sensor_below(2 * r.most);
+    CHECK(best_resistor(made.finished(), std::vector<double>{r.most, r.least}, 0).value().ohms ==
+          Approx(r.best).epsilon(2e-6));
+  }
+}
+
+TEST_CASE("39 kohm against 23 to 65 kohm reads 380 and 640 of 1023") {
+  // Published answer (electronics.stackexchange): about 260 steps.
+  Made made = advise_test::sensor_below(39e3);
+  made.finished();
+  const auto at = [&](double ohms) {
+    const std::vector<model::Override> held{{made.sensor, ohms}};
+    return 1023 * network::node_volts(made.divider.whole.network, held).value()[2] / 3.3;
+  };
+  CHECK(at(23e3) == Approx(380).margin(1));
+  CHECK(at(65e3) == Approx(640).margin(1));
+}
+
+TEST_CASE("a plain divider has both its gaps at their largest where its span is") {
+  const auto sensor = thermistor();
+  for (Made made : {advise_test::sensor_below(10e3), advise_test::sensor_above(10e3)}) {
+    const auto& divider = made.finished();
+    const double gap = 1 / (1 + std::sqrt(sensor.front() / sensor.back()));  // 1 - u_hi = u_lo = (1 - span)/2
+    CHECK(best_resistor(divider, sensor, gap).value().ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
+    CHECK_FALSE(best_resistor(divider, sensor, gap + 1e-6).has_value());
+  }
+}
+
+TEST_CASE("where the gap limit binds, the best resistor keeps it exactly") {
+  // A 3.3 V divider on a 3 V range: the cold end reads 1.1 Rmax/(R + Rmax), to be 0.98 at most; by hand R = Rmax
+  // (1.1/0.98 - 1).
+  const auto sensor = thermistor();
+  for (const double gap_limit : {0.015, 0.01, 0.0}) {
+    Made made = advise_test::sensor_below(10e3);
+    made.divider.input.nominal_high = 3;
+    const auto reach = best_resistor(made.finished(), sensor, gap_limit).value();
+    CHECK(reach.ohms == Approx(sensor.front() * (1.1 / (1 - gap_limit) - 1)).epsilon(1e-9));
+    CHECK(reach.span_use == Approx(1 - gap_limit - 1.1 * sensor.back() / (reach.ohms + sensor.back())).epsilon(1e-9));
+  }
+}
+
+TEST_CASE("leakage in the envelope moves the best resistor to where the gap limit holds with it") {
+  const auto sensor = thermistor();
+  Made made = advise_test::sensor_below(10e3);
+  made.board.resistor(2, 3, 100e3);
+  made.divider.whole.probe = node(3);
+  made.leak(3, 500e-9);
+  const auto& divider = made.finished();
+  // At the geometric mean the envelope's upper gap is 0.0451 less 500 nA through the tap's and the sense resistance:
+  // 0.0278.
+  CHECK(tried(divider, made.fixed, geometric_mean(sensor), sensor).gap == Approx(0.0282).margin(5e-5));
+  const double gap_limit = 0.0288;
+  const auto reach = best_resistor(divider, sensor, gap_limit).value();
+  const auto at = tried(divider, made.fixed, reach.ohms, sensor);
+  CHECK(at.gap == Approx(gap_limit).margin(1e-9));
+  CHECK(at.span == Approx(reach.span_use).epsilon(1e-9));
+  CHECK(reach.ohms > 1.01 * geometric_mean(sensor));
+  const double wanted = by_trying(divider, made.fixed, 10e3, sensor, gap_limit);
+  CHECK(reach.span_use >= wanted - 1e-12);
+  CHECK(reach.span_use == Approx(wanted).margin(1e-4));
+  // Without the leakage the same limit does not bind.
+  made.divider.whole.leakage_amperes = {0};
+  CHECK(best_resistor(divider, sensor, gap_limit).value().ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
+}
+
+TEST_CASE("an end of the range that is a net is read at that very point") {
+  const auto sensor = thermistor();
+  Made made = advise_test::with_volts(3.3);
+  made.board.resistor(1, 3, 200);  // the rail's net, node 3, sags with the divider's current
+  made.fixed = made.element(made.divider.upper, "R1", 3, 2, 10e3);
+  made.sensor = made.element(made.divider.lower, "RT1", 2, 0, 1);
+  advise_test::sweep_sensor(made);
+  made.divider.whole.high = node(3);
+  const auto reach = best_resistor(made.finished(), sensor, 0).value();
+  CHECK(reach.ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));  // the sag cancels
+  made.divider.whole.high = {};
+  CHECK(std::abs(best_resistor(made.finished(), sensor, 0).value().ohms - geometric_mean(sensor)) >
+        100);  // and here it does not
+}
+
+TEST_CASE("of several fixed resistors the one that reaches most is named") {
+  const auto sensor = thermistor();
+  Made made = advise_test::sensor_below(200);
+  const auto parallel = made.element(made.divider.lower, "R2", 2, 0, 1e6);
+  const auto& divider = made.finished();
+  const auto reach = best_resistor(divider, sensor, 0.02).value();
+  CHECK(reach.part == "R1");
+  const double by_upper = by_trying(divider, made.fixed, 200, sensor, 0.02);
+  const double by_parallel = by_trying(divider, parallel, 1e6, sensor, 0.02);
+  CHECK(by_upper > by_parallel);
+  CHECK(reach.span_use == Approx(by_upper).margin(1e-4));
+}
+
+TEST_CASE("the divider of a supply monitor is set so that the highest supply keeps the gap") {
+  Made made = advise_test::with_volts(12);
+  made.fixed = made.element(made.divider.upper, "R1", 1, 2, 100e3);
+  made.element(made.divider.lower, "R2", 2, 0, 10e3);
+  made.divider.whole.swept = {{made.rail, model::SweptQuantity::volts}};
+  const auto reach = best_resistor(made.finished(), std::vector<double>{9, 12, 15}, 0.02).value();
+  CHECK(reach.span_use == Approx(0.98 * (1 - 9.0 / 15)).epsilon(1e-9));
+  const double upper = reach.part == "R1" ? reach.ohms : 100e3;
+  const double lower = reach.part == "R2" ? reach.ohms : 10e3;
+  CHECK(15 * lower / (upper + lower) == Approx(0.98 * 3.3).epsilon(1e-9));
+}
+
+TEST_CASE("where every reading clips alike the present value stays") {
+  Made made = advise_test::sensor_below(10e3);
+  made.divider.input.nominal_low = 1.6;
+  made.divider.input.nominal_high = 1.7;
+  const auto reach = best_resistor(made.finished(), std::vector<double>{1e6, 100}, -100).value();
+  CHECK(reach.ohms == 10e3);
+  CHECK(reach.span_use == 1);
+}
+
+TEST_CASE("branches that move together are followed point by point") {
+  // A potentiometer as two resistors, its wiper the pin, with R1 above it: the reading rises with travel.
+  Made made = advise_test::with_volts(3.3);
+  made.fixed = made.element(made.divider.upper, "R1", 1, 3, 10e3);
+  const auto top = made.board.resistor(3, 2, 1);
+  const auto bottom = made.board.resistor(2, 0, 1);
+  std::vector<model::SweptValues> swept{{top, false, {}}, {bottom, false, {}}};
+  for (int i = 0; i <= 100; ++i) {
+    swept[0].values.push_back(10e3 * (1 - i / 100.0));
+    swept[1].values.push_back(10e3 * i / 100.0);
+  }
+  made.divider.whole.swept = {{top, model::SweptQuantity::ohms}, {bottom, model::SweptQuantity::ohms}};
+  // At the far end the reading is 10k/(R1 + 10k): by hand, 0.9 at R1 = 10k/9; the other gap is zero.
+  const auto reach = best_resistor(made.finished(), swept, -1).value();
+  CHECK(reach.ohms == Approx(10).epsilon(1e-6));  // a thousandth of the present: the search's end
+  CHECK(reach.span_use == Approx(10e3 / 10010).epsilon(1e-9));
+  for (auto& value : swept[1].values) value = std::max(value, 500.0);
+  const auto held = best_resistor(made.finished(), swept, 0.025).value();
+  CHECK(held.ohms == Approx(10e3 / 0.975 - 10e3).epsilon(1e-6));
+}
+
+TEST_CASE("without a fixed resistor to vary, or without a sweep to follow, there is nothing") {
+  const std::vector<double> sensor{1e3, 1e4};
+  Made good = advise_test::sensor_below(10e3);
+  CHECK(best_resistor(good.finished(), sensor, 0).has_value());
+  CHECK_FALSE(best_resistor(good.finished(), std::vector<double>{}, 0).has_value());
+  CHECK_FALSE(best_resistor(good.finished(), sensor, 0.6).has_value());
+
+  Made residual = advise_test::sensor_below(10e3);
+  residual.divider.whole.swept.front().quantity = model::SweptQuantity::value;
+  CHECK_FALSE(best_resistor(residual.finished(), sensor, 0).has_value());
+  const std::vector<model::SweptValues> variable{{residual.sensor, true, sensor}};
+  CHECK_FALSE(best_resistor(residual.finished(), variable, 0).has_value());
+  const std::vector<model::SweptValues> ohms{{residual.sensor, false, sensor}};
+  CHECK(best_resistor(residual.finished(), ohms, 0).value().ohms == Approx(std::sqrt(1e7)).epsilon(1e-6));
+
+  Made nameless = advise_test::sensor_below(10e3);
+  nameless.divider.upper.clear();
+  CHECK_FALSE(best_resistor(nameless.finished(), sensor, 0).has_value());
+
+  Made jumper = advise_test::sensor_below(0);
+  CHECK_FALSE(best_resistor(jumper.finished(), sensor, 0).has_value());
+
+  Made unswept = advise_test::sensor_below(10e3);
+  unswept.divider.whole.swept.clear();
+  CHECK_FALSE(best_resistor(unswept.finished(), sensor, 0).has_value());
+}
