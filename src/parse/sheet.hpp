@@ -1,5 +1,6 @@
-// TOML -> sheet. Three places, same keys, later wins: lines of the netlist that begin with *|, the file beside it, files
-// given with --with. Keys that this version has no use for are refused, or listed as not checked; none is ignored.
+// TOML -> sheet. Three places, same keys, later wins: lines of the netlist that begin with *|, the file beside it,
+// files given with --with. Keys that this version has no use for are refused, or listed as not checked; none is
+// ignored.
 #pragma once
 
 #include <span>
@@ -16,8 +17,8 @@ struct SheetSource {
   bool inside_netlist = false;
 };
 
-// Reads and merges the places in order, key by key. Every error (syntax, unknown key, wrong type or unit, missing key) is a
-// diagnostic with its place; a sheet with errors must not be audited.
+// Reads and merges the places in order, key by key. Every error (syntax, unknown key, wrong type or unit, missing key)
+// is a diagnostic with its place; a sheet with errors must not be audited.
 [[nodiscard]] model::Sheet read_sheet(std::span<const SheetSource> places, const source::Sources& sources,
                                       source::Diagnostics& diagnostics);
 
