@@ -1,0 +1,83 @@
+// Element cards -> elements of the flat circuit, with their nets, values and fates.
+#pragma once
+
+#include <optional>
+#include <string_view>
+#include <vector>
+
+#include "flatten/models.hpp"
+
+namespace flatten {
+
+class Elements {
+ public:
+  Elements(Work& work, Parameters& parameters, Values& values, Models& models);
+
+  // Adds the element of a card that is no instance. Controlled and behavioural sources get their part in finish(),
+  // since they may name what stands behind them.
+  void add(const Frame& frame, const model::ElementCard& card);
+
+  // How many sources wait for finish().
+  [[nodiscard]] std::size_t waiting() const { return waiting_.size(); }
+
+  // Gives the sources of a frame their parts: those that wait, but for the first `older`, which are its callers'.
+  void finish(const Frame& frame, std::size_t older);
+
+  // Adds a card's element without a model. `failed`: the card has an error, which has been said.
+  void add_unmodelled(const Frame& frame, const model::ElementCard& card, model::Unmodelled part, bool failed = false);
+
+  // The net of a card's node.
+  [[nodiscard]] model::NetId net(const Frame& frame, const model::ElementCard& card, std::uint32_t node);
+
+ private:
+  // The part of a card, or nothing where it has an error.
+  using Outcome = std::optional<model::Part>;
+
+  struct Waiting {
+    model::ElementId element;
+    const model::ElementCard* card;
+  };
+
+  model::ElementId place(const Frame& frame, const model::ElementCard& card, model::Part part);
+  Outcome part_of(const Frame& frame, const model::ElementCard& card);
+
+  // passives.cpp
+  Outcome resistor(const Frame& frame, const model::ElementCard& card);
+  Outcome reactance(const Frame& frame, const model::ElementCard& card);
+  Outcome independent(const Frame& frame, const model::ElementCard& card);
+  Reading passive_value(const Frame& frame, const model::ElementCard& card, const FoundModel& model);
+  [[nodiscard]] FoundModel passive_model(const Frame& frame, const model::ElementCard& card) const;
+  std::optional<double> fixed(const Frame& frame, const model::Assignment& assignment, model::CardId card);
+  std::optional<double> tolerance(const Frame& frame, const model::ElementCard& card);
+  [[nodiscard]] double spread_of(const model::ModelCard& card) const;
+  std::optional<double> fixed_parameter(const Frame& frame, const model::ElementCard& card, std::string_view key);
+  void detail(const Frame& frame, const model::ElementCard& card, const Quantity& quantity, const FoundModel& model);
+  [[nodiscard]] model::Unmodelled without_value(const model::ElementCard& card, base::NameId word) const;
+
+  // devices.cpp
+  Outcome device(const Frame& frame, const model::ElementCard& card);
+  enum class Given : std::uint8_t { numbers, swept, failed };
+  Given device_parameters(const Frame& frame, const model::ElementCard& card, model::Device& device);
+  void say_unknown(const Frame& frame, const model::ElementCard& card, const model::Word& key);
+
+  // sources.cpp
+  Outcome source_part(const Frame& frame, const model::ElementCard& card, model::Element& element);
+  Outcome gain_source(const Frame& frame, const model::ElementCard& card, model::Element& element);
+  Outcome current_controlled(const Frame& frame, const model::ElementCard& card);
+  Outcome behavioural(const Frame& frame, const model::ElementCard& card, model::Element& element, bool drives_current);
+
+  [[nodiscard]] const model::Assignment* parameter(const model::ElementCard& card, std::string_view key) const;
+  void suspect(const Quantity& quantity) {
+    if (quantity.odd) suspect(quantity.readings);
+  }
+  void suspect(const OddValue& value);
+
+  Work& work_;
+  Parameters& parameters_;
+  Values& values_;
+  Models& models_;
+  model::ElementId current_;  // the element whose part is being made
+  std::vector<Waiting> waiting_;
+};
+
+}  // namespace flatten

@@ -1,0 +1,203 @@
+#include <array>
+#include <cmath>
+#include <fmt/format.h>
+#include <limits>
+
+#include "base/text.hpp"
+#include "flatten/elements.hpp"
+
+namespace flatten {
+namespace {
+
+using model::Number;
+using model::Unmodelled;
+using Why = model::Unmodelled::Why;
+
+constexpr double none = std::numeric_limits<double>::quiet_NaN();
+
+struct PassiveKind {
+  char letter;
+  std::string_view full;        // the long name of its own key
+  std::string_view long_model;  // the type of its models beside the letter itself
+};
+constexpr std::array kinds{PassiveKind{'r', "resistance", "res"}, PassiveKind{'c', "capacitance", "cap"},
+                           PassiveKind{'l', "inductance", "ind"}};
+
+const PassiveKind& kind_of(char letter) {
+  return letter == 'r' ? kinds[0] : letter == 'c' ? kinds[1] : kinds[2];
+}
+
+// Words by which people mark a part that is not fitted: common practice, no source.
+bool means_not_fitted(std::string_view word) {
+  constexpr std::array<std::string_view, 9> words{
+      "dnp", "dni", "dnf", "dnm", "nofit", "nopop", "nf", "do-not-populate", "not-fitted"};
+  return std::any_of(words.begin(), words.end(), [&](std::string_view known) { return base::same_name(known, word); });
+}
+
+Number scaled(model::ExpressionPool& pool, model::Op op, const Number& number, double factor) {
+  if (!number.fixed()) return {0, expression::add_binary(pool, op, number, Number{factor, {}})};
+  return {op == model::Op::multiply ? number.value * factor : number.value / factor, {}};
+}
+
+}  // namespace
+
+Unmodelled Elements::without_value(const model::ElementCard& card, base::NameId word) const {
+  const base::NameId wanted = word.valid() ? word : card.reference.name;
+  const bool not_fitted = wanted.valid() && means_not_fitted(work_.names.text(wanted));
+  return {not_fitted ? Why::not_fitted : Why::no_value, wanted};
+}
+
+// The value on the card, or that of its model.
+Reading Elements::passive_value(const Frame& frame, const model::ElementCard& card, const FoundModel& model) {
+  const PassiveKind& kind = kind_of(card.letter);
+  const Letter letter = card.letter == 'r' ? Letter::resistor : Letter::other;
+  const std::string_view key(&kind.letter, 1);
+  Reading reading = values_.read(frame, card.value, card.card, letter);
+  const model::Assignment* own = parameter(card, key);
+  if (own == nullptr) own = parameter(card, kind.full);
+  if (std::holds_alternative<NoValue>(reading) && own != nullptr)
+    reading = values_.read(frame, *own, card.card, letter);
+  if (model.card == nullptr) return reading;
+  const model::Assignment* entry = models_.entry(*model.card, key);
+  if (entry == nullptr) entry = models_.entry(*model.card, kind.full);
+  if (entry == nullptr) return reading;
+  const Frame& owner = Models::owner(frame, model.scope);
+  if (std::holds_alternative<NoValue>(reading)) return values_.read(owner, *entry, model.card->card, letter);
+  // Of a model of the long type, as capture tools write it, the entry multiplies the card's value.
+  auto* const quantity = std::get_if<Quantity>(&reading);
+  if (quantity == nullptr || !base::same_name(work_.names.text(model.card->type), kind.long_model)) return reading;
+  const Reading factor = values_.read(owner, *entry, model.card->card, Letter::other);
+  const auto* const times = std::get_if<Quantity>(&factor);
+  if (times == nullptr || !times->number.fixed() || times->number.value == 1) return reading;
+  quantity->number = scaled(work_.circuit.expressions, model::Op::multiply, quantity->number, times->number.value);
+  return reading;
+}
+
+FoundModel Elements::passive_model(const Frame& frame, const model::ElementCard& card) const {
+  const auto* const word = std::get_if<base::NameId>(&card.value);
+  const base::NameId name = card.reference.name.valid() ? card.reference.name
+                            : word != nullptr           ? *word
+                                                        : base::NameId{};
+  if (!name.valid()) return {};
+  const FoundModel found = work_.library.model(frame.scope, name);
+  if (found.card == nullptr) return {};
+  const PassiveKind& kind = kind_of(card.letter);
+  const std::string_view type = work_.names.text(found.card->type);
+  const bool fits = base::same_name(type, std::string_view(&kind.letter, 1)) || base::same_name(type, kind.long_model);
+  return fits ? found : FoundModel{};
+}
+
+Elements::Outcome Elements::resistor(const Frame& frame, const model::ElementCard& card) {
+  if (card.nodes.count != 2) return Unmodelled{Why::unsupported, card.reference.name};
+  const auto* const plain = std::get_if<double>(&card.value);
+  if (plain != nullptr && *plain >= 0 && std::isfinite(*plain) && card.parameters.count == 0 &&
+      !card.reference.name.valid())
+    return model::Resistor{{*plain, {}}};
+  const FoundModel model = passive_model(frame, card);
+  const Reading reading = passive_value(frame, card, model);
+  if (std::holds_alternative<Failed>(reading)) return std::nullopt;
+  if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  Quantity quantity = std::get<Quantity>(reading);
+  if (quantity.number.fixed() && quantity.number.value < 0) {
+    const source::Span where = quantity.where.valid() ? quantity.where : work_.netlist.span(card.card);
+    work_.problems.say(ProblemKind::value, base::Level::error, where, frame.instance,
+                       fmt::format("a resistance cannot be negative, and {} is {}", work_.shown(card.name),
+                                   base::si_text(quantity.number.value, "ohm")));
+    return std::nullopt;
+  }
+  const std::optional<double> count = fixed_parameter(frame, card, "m");
+  if (count && *count > 0)
+    quantity.number = scaled(work_.circuit.expressions, model::Op::divide, quantity.number, *count);
+  detail(frame, card, quantity, model);
+  suspect(quantity);
+  return model::Resistor{quantity.number};
+}
+
+Elements::Outcome Elements::reactance(const Frame& frame, const model::ElementCard& card) {
+  if (card.nodes.count != 2) return Unmodelled{Why::unsupported, card.reference.name};
+  const FoundModel model = passive_model(frame, card);
+  const Reading reading = passive_value(frame, card, model);
+  if (std::holds_alternative<Failed>(reading)) return std::nullopt;
+  if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  const auto& quantity = std::get<Quantity>(reading);
+  suspect(quantity);
+  if (card.letter == 'c') return model::Capacitor{quantity.number};
+  // At DC an inductor is its series resistance, where the card gives one.
+  const std::optional<double> series_ohms = fixed_parameter(frame, card, "rser");
+  if (series_ohms && *series_ohms > 0) return model::Resistor{{*series_ohms, {}}};
+  return model::Inductor{quantity.number};
+}
+
+Elements::Outcome Elements::independent(const Frame& frame, const model::ElementCard& card) {
+  if (card.nodes.count != 2) return Unmodelled{Why::unsupported, card.reference.name};
+  Reading reading = values_.read(frame, card.value, card.card, Letter::other);
+  if (const model::Assignment* dc = parameter(card, "dc"); dc != nullptr && std::holds_alternative<NoValue>(reading))
+    reading = values_.read(frame, *dc, card.card, Letter::other);
+  if (std::holds_alternative<Failed>(reading)) return std::nullopt;
+  if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  const auto& quantity = std::get<Quantity>(reading);
+  suspect(quantity);
+  const model::Assignment* const series = parameter(card, "rser");
+  if (card.letter == 'v' && series != nullptr) say_unknown(frame, card, series->key);
+  if (card.letter == 'v') return model::VoltageSource{quantity.number};
+  return model::CurrentSource{quantity.number};
+}
+
+// A parameter of the card that is a number, or nothing. Errors in it have been said.
+std::optional<double> Elements::fixed_parameter(const Frame& frame, const model::ElementCard& card,
+                                                std::string_view key) {
+  const model::Assignment* const assignment = parameter(card, key);
+  if (assignment == nullptr) return std::nullopt;
+  return fixed(frame, *assignment, card.card);
+}
+
+std::optional<double> Elements::fixed(const Frame& frame, const model::Assignment& assignment, model::CardId card) {
+  const Reading reading = values_.read(frame, assignment, card, Letter::other);
+  const auto* const quantity = std::get_if<Quantity>(&reading);
+  if (quantity == nullptr || !quantity->number.fixed()) return std::nullopt;
+  return quantity->number.value;
+}
+
+// A tolerance on a card: 5% is a fraction already, a plain number is in percent (one simulator's schematic editor
+// writes tol=1).
+std::optional<double> Elements::tolerance(const Frame& frame, const model::ElementCard& card) {
+  const model::Assignment* assignment = parameter(card, "tol");
+  if (assignment == nullptr) assignment = parameter(card, "tolerance");
+  if (assignment == nullptr) return std::nullopt;
+  if (const auto* id = std::get_if<model::OddLiteralId>(&assignment->value)) {
+    const model::OddLiteral& literal = work_.netlist.odd_literals[id->index()];
+    return literal.builder < literal.spice ? literal.builder : literal.builder / 100;
+  }
+  const std::optional<double> percent = fixed(frame, *assignment, card.card);
+  return percent ? std::optional(*percent / 100) : std::nullopt;
+}
+
+void Elements::detail(const Frame& frame, const model::ElementCard& card, const Quantity& quantity,
+                      const FoundModel& model) {
+  const auto coefficient = [&](std::string_view key) {
+    if (const auto own = fixed_parameter(frame, card, key)) return *own;
+    if (model.card == nullptr) return 0.0;
+    const model::Assignment* const entry = models_.entry(*model.card, key);
+    if (entry == nullptr) return 0.0;
+    return fixed(Models::owner(frame, model.scope), *entry, model.card->card).value_or(0);
+  };
+  model::Detail detail{current_, quantity.tolerance, coefficient("tc1"), coefficient("tc2")};
+  if (const auto written = tolerance(frame, card)) detail.tolerance = *written;
+  if (model.card != nullptr && std::isnan(detail.tolerance)) detail.tolerance = spread_of(*model.card);
+  if (std::isnan(detail.tolerance) && detail.tc1 == 0 && detail.tc2 == 0) return;
+  work_.circuit.details.push_back(detail);
+}
+
+// DEV=5% of a model: the spread of each part. Without a percent sign it is in ohms, which says nothing here.
+double Elements::spread_of(const model::ModelCard& card) const {
+  const model::Assignment* const entry = models_.entry(card, "dev");
+  const auto* const id = entry == nullptr ? nullptr : std::get_if<model::OddLiteralId>(&entry->value);
+  if (id == nullptr) return none;
+  const model::OddLiteral& literal = work_.netlist.odd_literals[id->index()];
+  return literal.builder < literal.spice ? literal.builder : none;
+}
+
+}  // namespace flatten
