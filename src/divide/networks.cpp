@@ -1,0 +1,235 @@
+#include "divide/networks.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <limits>
+
+#include "divide/sensors.hpp"
+#include "divide/sweep_values.hpp"
+#include "network/linear.hpp"
+
+namespace divide {
+namespace {
+
+using model::BranchId;
+
+BranchId push(model::Network& network, model::Branch branch) {
+  network.branches.push_back(std::move(branch));
+  return BranchId{static_cast<std::uint32_t>(network.branches.size() - 1)};
+}
+
+// Which branches the sensor moves.
+std::vector<model::SweptBranch> swept_branches(const Subject& subject, const Built& built) {
+  std::vector<model::SweptBranch> swept;
+  if (subject.sensor == nullptr) return swept;
+  const Graph& graph = subject.graph;
+  const BoundSensor& bound = graph.board().sensors[subject.sensor->sensor];
+  for (const auto& [edge, branch] : built.edges) {
+    if (graph.is_extra(edge) && graph.extra(edge).sensor == subject.sensor->sensor)
+      swept.push_back({branch, model::SweptQuantity::ohms});
+    else if (bound.variable && depends_on(graph, expression_of(graph.part(edge)), *bound.variable))
+      swept.push_back({branch, model::SweptQuantity::value});
+  }
+  for (const auto& [index, branch] : built.rails) {
+    const Rail& rail = graph.rails().rails[index];
+    if (rail.sensor == subject.sensor->sensor)
+      swept.push_back({branch, model::SweptQuantity::volts});
+    else if (bound.variable && depends_on(graph, rail.volts.residual, *bound.variable))
+      swept.push_back({branch, model::SweptQuantity::value});
+  }
+  return swept;
+}
+
+// Whether an end of the converter's range moves with the network: then it is probed like the pin.
+bool must_probe(const Graph& graph, const model::BoundEnd& end) {
+  const auto* net = std::get_if<model::NetId>(&end);
+  if (net == nullptr) return false;
+  const Rail* rail = graph.rails().at(graph.nodes().of(*net));
+  return rail == nullptr || rail->ohms != 0 || rail->sensor || !rail->volts.fixed();
+}
+
+void probe_ends(const Subject& subject, const Built& built, model::ProbedNetwork& out) {
+  const auto node_of = [&](const model::BoundEnd& end) {
+    return must_probe(subject.graph, end) ? built.node(subject.graph.nodes().of(std::get<model::NetId>(end))) : model::NodeId{};
+  };
+  out.low = node_of(subject.input.low);
+  out.high = node_of(subject.input.high);
+}
+
+void note_sensor(const Subject& subject, const Built& built, model::ProbedNetwork& out) {
+  if (subject.sensor == nullptr || subject.sensor->is_rail) return;
+  out.sensor_plus = built.node(subject.sensor->plus);
+  out.sensor_minus = built.node(subject.sensor->minus);
+  if (subject.sensor->edges.size() != 1) return;
+  const BranchId branch = built.branch(subject.sensor->edges.front());
+  if (branch.valid() && std::holds_alternative<model::Resistor>(built.network.branches[branch.index()].part)) out.sensor = branch;
+}
+
+// Each converter input on the network draws its leakage and has its input resistance.
+void add_inputs(const Subject& subject, const Built& built, model::ProbedNetwork& out) {
+  for (const model::Input& input : subject.inputs) {
+    const Node node = subject.graph.nodes().of(input.net);
+    const model::NodeId at = built.node(node);
+    if (!at.valid() || subject.graph.rails().ideal_at(node) != nullptr) continue;
+    if (input.input_resistance)
+      push(out.network, {model::Resistor{{*input.input_resistance, {}}}, {at, model::ground_node}, 2, model::BranchOrigin::input_resistance, {}, {}});
+    if (input.leakage == 0) continue;
+    out.leakages.push_back(push(out.network, {model::CurrentSource{}, {model::ground_node, at}, 2, model::BranchOrigin::leakage, {}, {}}));
+    out.leakage_amperes.push_back(input.leakage);
+  }
+}
+
+std::vector<Node> wanted_nodes(const Subject& subject) {
+  std::vector<Node> nodes{subject.graph.nodes().of(subject.input.net)};
+  for (const model::BoundEnd* end : {&subject.input.low, &subject.input.high})
+    if (const auto* net = std::get_if<model::NetId>(end)) nodes.push_back(subject.graph.nodes().of(*net));
+  return nodes;
+}
+
+// Takes the network out of `built`.
+model::ProbedNetwork finish(const Subject& subject, Built& built, Node probe) {
+  model::ProbedNetwork out;
+  out.probe = built.node(probe);
+  probe_ends(subject, built, out);
+  note_sensor(subject, built, out);
+  out.swept = swept_branches(subject, built);
+  out.network = std::move(built.network);
+  return out;
+}
+
+std::vector<Edge> with_sensor(const Subject& subject, std::span<const Edge> arms) {
+  std::vector<Edge> edges(arms.begin(), arms.end());
+  if (subject.sensor != nullptr) edges.insert(edges.end(), subject.sensor->edges.begin(), subject.sensor->edges.end());
+  std::sort(edges.begin(), edges.end());
+  edges.erase(std::unique(edges.begin(), edges.end()), edges.end());
+  return edges;
+}
+
+// A network in which the sensor is a single resistance, whatever it is made of.
+struct Plain {
+  model::Network network;
+  BranchId sensor;
+  model::NodeId probe;
+};
+
+Plain plain_network(const Subject& subject, std::span<const Edge> edges, Node probe, bool ideal_rails) {
+  std::vector<Edge> others;
+  const auto& own = subject.sensor->edges;
+  std::copy_if(edges.begin(), edges.end(), std::back_inserter(others),
+               [&](Edge edge) { return std::find(own.begin(), own.end(), edge) == own.end(); });
+  const std::vector<Node> nodes{probe, subject.sensor->plus, subject.sensor->minus};
+  Built built = build(subject.graph, others, nodes, ideal_rails);
+  Plain plain{std::move(built.network), {}, built.node(probe)};
+  const model::NodeId plus = built.node(subject.sensor->plus);
+  const model::NodeId minus = built.node(subject.sensor->minus);
+  plain.sensor = push(plain.network, {model::Resistor{{1e4, {}}}, {plus, minus}, 2, model::BranchOrigin::sensor, {}, {}});
+  return plain;
+}
+
+// What the sensor is at a few points: its ohms, or where only the simulator could tell them, five decades of ohms.
+std::vector<double> sample_ohms(const Subject& subject, const model::SensorDeclaration& declaration) {
+  constexpr std::size_t samples = 7;
+  const std::vector<double> decades{1e2, 1e3, 1e4, 1e5, 1e6};
+  if (subject.sensor->edges.size() != 1) return decades;
+  Built built = build(subject.graph, subject.sensor->edges, {}, true);
+  const model::ProbedNetwork probed = finish(subject, built, subject.sensor->plus);
+  const auto at = measurands(declaration, samples);
+  if (!at.ok() || probed.swept.size() != 1 || !probed.sensor.valid()) return decades;
+  const auto values = swept_values(probed, subject.graph.circuit(), declaration, *at);
+  return values.ok() ? values->front().values : decades;
+}
+
+// Pin volts with a resistance for a sensor, at each sample; empty where some have no solution.
+std::vector<double> pin_volts(const Subject& subject, std::span<const Edge> edges, std::span<const double> ohms, double at) {
+  Plain plain = plain_network(subject, edges, subject.graph.nodes().of(subject.input.net), false);
+  std::vector<double> volts;
+  if (!freeze(plain.network, subject.graph.circuit(), at)) return volts;
+  for (const double value : ohms) {
+    const model::Override held{plain.sensor, value};
+    const auto solved = network::node_volts(plain.network, {&held, 1});
+    if (!solved.ok()) return {};
+    volts.push_back((*solved)[plain.probe.index()]);
+  }
+  return volts;
+}
+
+// Pin volts of a monitor: the swept rail at rest moves the pin in proportion, so its highest volts tell the weights.
+std::vector<double> monitor_volts(const Subject& subject, std::span<const Edge> edges, double at) {
+  Built built = build(subject.graph, edges, wanted_nodes(subject), false);
+  if (!freeze(built.network, subject.graph.circuit(), at)) return {};
+  std::vector<model::Override> held;
+  for (const auto& [index, branch] : built.rails) {
+    const Rail& rail = subject.graph.rails().rails[index];
+    if (rail.sensor || !rail.has_volts) held.push_back({branch, rail.highest_volts});
+  }
+  const auto solved = network::node_volts(built.network, held);
+  if (!solved.ok()) return {};
+  return {(*solved)[built.node(subject.graph.nodes().of(subject.input.net)).index()]};
+}
+
+std::vector<Edge> without(std::span<const Edge> edges, std::span<const Edge> removed) {
+  std::vector<Edge> left;
+  std::copy_if(edges.begin(), edges.end(), std::back_inserter(left),
+               [&](Edge edge) { return std::find(removed.begin(), removed.end(), edge) == removed.end(); });
+  return left;
+}
+
+// Whether the sensor's inside is joined to a rail that is none of its two ends: then no one resistance stands for it.
+bool has_third_end(const Subject& subject) {
+  for (const Edge edge : subject.sensor->edges)
+    for (std::size_t i = 0; i < subject.graph.pin_count(edge); ++i) {
+      const Node node = subject.graph.pin(edge, i);
+      if (node != subject.sensor->plus && node != subject.sensor->minus && subject.graph.rails().at(node) != nullptr) return true;
+    }
+  return false;
+}
+
+}  // namespace
+
+model::ProbedNetwork whole_network(const Subject& subject) {
+  std::vector<Node> nodes = wanted_nodes(subject);
+  if (subject.sensor != nullptr) nodes.push_back(subject.sensor->plus), nodes.push_back(subject.sensor->minus);
+  Built built = build(subject.graph, subject.around.edges, nodes, false);
+  model::ProbedNetwork out = finish(subject, built, subject.graph.nodes().of(subject.input.net));
+  add_inputs(subject, built, out);
+  return out;
+}
+
+model::ProbedNetwork bare_network(const Subject& subject, std::span<const Edge> arms, Node tap) {
+  std::vector<Node> nodes{tap};
+  if (subject.sensor != nullptr) nodes.push_back(subject.sensor->plus), nodes.push_back(subject.sensor->minus);
+  for (const model::BoundEnd* end : {&subject.input.low, &subject.input.high})
+    if (must_probe(subject.graph, *end)) nodes.push_back(subject.graph.nodes().of(std::get<model::NetId>(*end)));
+  Built built = build(subject.graph, with_sensor(subject, arms), nodes, true);
+  return finish(subject, built, tap);
+}
+
+std::optional<model::OnePort> sensor_form(const Subject& subject, std::span<const Edge> arms, Node tap) {
+  if (subject.sensor == nullptr || subject.sensor->is_rail || has_third_end(subject)) return std::nullopt;
+  const Plain plain = plain_network(subject, arms, tap, true);
+  const bool fixed = std::none_of(plain.network.branches.begin(), plain.network.branches.end(), [](const model::Branch& branch) {
+    return expression_of(branch.part).valid();
+  });
+  if (!plain.network.linear || !fixed) return std::nullopt;
+  const auto form = network::one_port(plain.network, plain.sensor, plain.probe);
+  return form.ok() ? std::optional(*form) : std::nullopt;
+}
+
+Weigh weigher(const Subject& subject, const model::SensorDeclaration& declaration) {
+  const bool monitor = subject.sensor->is_rail;
+  const std::vector<double> ohms = monitor ? std::vector<double>{} : sample_ohms(subject, declaration);
+  const double end = declaration.to ? declaration.to->value : 0;
+  const auto solve = [subject, monitor, ohms, end](std::span<const Edge> edges) {
+    return monitor ? monitor_volts(subject, edges, end) : pin_volts(subject, edges, ohms, end);
+  };
+  const std::vector<double> all = solve(subject.around.edges);
+  return [subject, solve, all](std::span<const Edge> removed) {
+    const std::vector<double> left = solve(without(subject.around.edges, removed));
+    if (left.size() != all.size()) return std::numeric_limits<double>::infinity();
+    double most = 0;
+    for (std::size_t i = 0; i < all.size(); ++i) most = std::max(most, std::fabs(left[i] - all[i]));
+    return most;
+  };
+}
+
+}  // namespace divide

@@ -1,0 +1,45 @@
+// What stands in the way of an audit: parts without a model, and cards that could not be read, on an input's network.
+#pragma once
+
+#include <string>
+#include <string_view>
+#include <unordered_set>
+#include <vector>
+
+#include "base/names.hpp"
+#include "divide/collect.hpp"
+#include "divide/graph.hpp"
+#include "model/divider.hpp"
+#include "model/netlist.hpp"
+#include "source/text.hpp"
+
+namespace divide {
+
+// Whether a part without a model may be taken as open, by its reference designator's class letters (IEEE 315: J and P
+// connectors, TP test points, C capacitors, D diodes and clamp arrays).
+[[nodiscard]] bool is_taken_as_open(std::string_view name);
+
+// Parts without a model that touch a node of the network; declared converters are left out.
+[[nodiscard]] std::vector<model::UnmodelledTouch> find_touches(const Graph& graph, const Surroundings& around);
+
+// The words of cards that could not be read, for asking whether one of them is a net of a network.
+class BrokenCards {
+ public:
+  BrokenCards(const model::Netlist& netlist, const source::Sources& sources, const base::NameTable& names);
+
+  // The first card that names a net of the network: the net by its own name, by its name inside its subcircuit, or by the
+  // port of an instance that is joined to it. None: an invalid id.
+  [[nodiscard]] model::CardId touching(const Graph& graph, const Surroundings& around, const model::Netlist& netlist) const;
+
+  [[nodiscard]] bool empty() const { return cards_.empty(); }
+
+ private:
+  struct Card {
+    model::CardId id;
+    std::unordered_set<std::string> words;  // folded
+  };
+  std::vector<Card> cards_;
+  const base::NameTable& names_;
+};
+
+}  // namespace divide
