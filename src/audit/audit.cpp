@@ -1,1 +1,126 @@
 #include "audit/audit.hpp"
+
+#include <algorithm>
+#include <map>
+#include <unordered_set>
+#include <utility>
+
+#include <fmt/format.h>
+
+#include "audit/reading.hpp"
+#include "audit/solving.hpp"
+#include "base/text.hpp"
+#include "divide/divide.hpp"
+#include "flatten/flatten.hpp"
+#include "judge/judge.hpp"
+
+namespace audit {
+namespace {
+
+// The facts of a board that its own rules judge.
+judge::BoardFacts facts_of(const Reading& reading, const model::Division& division) {
+  judge::BoardFacts facts;
+  facts.netlist = {{reading.netlist.root, 0}, 0};
+  facts.levels = reading.sheet.levels;
+  for (std::uint32_t i = 0; i < reading.netlist.cards.size(); ++i)
+    if (reading.netlist.cards[i].fate == model::CardFate::error) facts.unreadable.push_back(reading.netlist.span(model::CardId{i}));
+  for (const auto& missing : reading.netlist.missing_includes)
+    facts.missing_includes.push_back({missing.where, std::string(reading.sources.text(missing.where))});
+  for (const auto& assumption : division.assumptions) facts.assumptions.push_back(assumption.text);
+  std::unordered_set<std::uint32_t> told;
+  for (const auto& divider : division.dividers)
+    for (const auto& suspect : divider.suspects) told.insert(suspect.element.value);
+  std::map<std::uint32_t, judge::BoardFacts::Elsewhere> by_file;
+  for (const auto& suspect : reading.circuit.suspects) {
+    if (told.contains(suspect.element.value)) continue;
+    auto& entry = by_file[suspect.where.begin.source.value];
+    if (entry.count++ == 0) entry.where = suspect.where;
+  }
+  for (const auto& [file, entry] : by_file) facts.suspects.push_back(entry);
+  return facts;
+}
+
+std::vector<std::string> not_checked(const model::Sheet& sheet) {
+  std::vector<std::string> lines;
+  for (const auto& key : sheet.unused) lines.push_back(fmt::format("{}: {}", base::printable_short(key.key), key.missing));
+  return lines;
+}
+
+void complain(Reading& reading, model::BoardReport& report, std::string message) {
+  reading.diagnostics.push_back({base::Level::error, {{reading.netlist.root, 0}, 0}, std::move(message)});
+  report.done_in_whole = false;
+}
+
+// Whether the text holds anything that could be audited; says why not.
+bool worth_auditing(Reading& reading, model::BoardReport& report) {
+  if (reading.sheet_has_errors) {
+    report.done_in_whole = false;  // each error has been said at its place
+    return false;
+  }
+  const auto& count = report.reading;
+  if (count.cards == 0) return complain(reading, report, "the netlist has no cards"), false;
+  if (count.error == count.cards) return complain(reading, report, "no card of the netlist could be read"), false;
+  if (reading.sheet.converters.empty())
+    return complain(reading, report, "no converter is declared, so there is no input to audit: declare [converter.NAME] with bits, high and inputs"), false;
+  return true;
+}
+
+std::string drawn(const Reading& reading) {
+  std::string text;
+  for (const auto& diagnostic : reading.diagnostics) text += source::draw(reading.sources, diagnostic);
+  return text;
+}
+
+// Reports name nets by these: they never see the circuit.
+void name_nets(const Reading& reading, const model::Divider& divider, model::BoardReport& report) {
+  const auto name = [&](model::NetId net) {
+    if (net.valid())
+      report.net_names.try_emplace(net, net == model::ground ? "0" : std::string(reading.names.text(reading.circuit.nets[net.index()].name)));
+  };
+  name(divider.tap);
+  for (const auto& candidate : divider.candidates) name(candidate.net);
+  for (const model::NetId net : divider.nets) name(net);
+}
+
+void take_inputs(const Reading& reading, model::Division& division, model::BoardReport& report) {
+  for (auto& divider : division.dividers) {
+    name_nets(reading, divider, report);
+    model::AuditedInput input;
+    input.divider = std::move(divider);
+    report.inputs.push_back(std::move(input));
+  }
+}
+
+}  // namespace
+
+BoardRun audit_board(const std::string& netlist, const Options& options, simulate::Session* session) {
+  BoardRun run;
+  model::BoardReport& report = run.report;
+  report.netlist = netlist;
+  Reading reading = read_board(netlist, options);
+  if (!reading.failure.empty()) {
+    report.done_in_whole = false;
+    run.diagnostics = reading.failure;
+    return run;
+  }
+  report.reading = flatten::count_cards(reading.netlist);
+  report.not_checked = not_checked(reading.sheet);
+  model::Division division;
+  if (worth_auditing(reading, report)) {
+    const std::size_t before = source::count(reading.diagnostics, base::Level::error);
+    division = divide::divide({reading.netlist, reading.sources, reading.circuit, reading.sheet, reading.names, options.only}, reading.diagnostics);
+    if (source::count(reading.diagnostics, base::Level::error) != before)
+      report.done_in_whole = false;
+    else if (division.dividers.empty())
+      complain(reading, report, "no declared input is left to audit");
+  }
+  const judge::BoardFacts facts = facts_of(reading, division);
+  take_inputs(reading, division, report);
+  if (session != nullptr) solve_and_judge(reading, options.points, *session, report);
+  run.diagnostics = drawn(reading);
+  report.sources = std::move(reading.sources);
+  if (session != nullptr) judge::judge_board(report, facts);
+  return run;
+}
+
+}  // namespace audit

@@ -1,0 +1,36 @@
+// The plans of an input, and what their solutions mean for the judge.
+#pragma once
+
+#include <optional>
+#include <span>
+#include <vector>
+
+#include "base/result.hpp"
+#include "judge/judge.hpp"
+#include "model/divider.hpp"
+#include "model/plan.hpp"
+#include "model/sheet.hpp"
+#include "model/sweep.hpp"
+
+namespace audit {
+
+// One input made ready for the simulator.
+struct Prepared {
+  std::vector<double> at;                   // measurand
+  std::vector<double> sensor_ohms;          // by law or expression; empty where only a solution tells, or for a swept rail
+  std::vector<model::SweptValues> swept;    // of the whole network
+  std::vector<model::SweptValues> bare_swept;
+  model::Plan whole;                        // may be moved out once prepared
+  std::optional<model::Plan> bare;          // only where the arms are not linear: else the closed form is the bare divider
+};
+
+// Error: the sweep has no values (the sentence says why).
+[[nodiscard]] base::Result<Prepared> prepare(const model::Divider& divider, const model::Circuit& circuit,
+                                             const model::SensorDeclaration& sensor, std::span<const model::ConditionKind> needs,
+                                             std::size_t points);
+
+// Solutions of `plan` (Prepared::whole) and of the bare plan, with the closed forms, as the judge takes them. Error: the bare divider has no solution.
+[[nodiscard]] base::Result<judge::Solved> solved_of(const model::Divider& divider, const Prepared& prepared, const model::Plan& plan, const model::Solution& whole,
+                                                    const model::Solution* bare);
+
+}  // namespace audit
