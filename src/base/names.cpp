@@ -5,6 +5,8 @@
 #include <numeric>
 #include <string>
 
+#include "base/pages.hpp"
+
 namespace base {
 namespace {
 
@@ -12,16 +14,23 @@ constexpr char fold(char c) {
   return c >= 'A' && c <= 'Z' ? static_cast<char>(c + ('a' - 'A')) : c;
 }
 
-// FNV-1a over the folded bytes, with a last mix because the low bits choose the slot.
+// FNV-1a over the folded bytes but the last, well mixed; the last byte fills the low bits. So R1230 to R1239, which
+// netlists name one after the other, lie in one cache line of the table.
 std::uint32_t hash_of(std::string_view text) {
+  constexpr std::uint32_t line_bits = 3;
+  if (text.empty()) return 0;
   std::uint32_t hash = 2166136261U;
-  for (const char c : text) hash = (hash ^ static_cast<unsigned char>(fold(c))) * 16777619U;
+  for (const char c : text.substr(0, text.size() - 1)) hash = (hash ^ static_cast<unsigned char>(fold(c))) * 16777619U;
   hash ^= hash >> 15;
   hash *= 0x2c1b3c6dU;
-  return hash ^ (hash >> 13);
+  hash ^= hash >> 13;
+  const auto last = static_cast<std::uint32_t>(static_cast<unsigned char>(fold(text.back())));
+  return (hash << line_bits) ^ last;
 }
 
-constexpr std::size_t block_bytes = std::size_t{1} << 16;
+// Blocks grow with what is kept, so that a large table lies in large pages and a small one stays small.
+constexpr std::size_t least_block = std::size_t{1} << 16;
+constexpr std::size_t largest_block = std::size_t{1} << 23;
 
 }  // namespace
 
@@ -42,7 +51,7 @@ void NameTable::reserve(std::size_t names) {
   std::size_t slots = slots_.size();
   while (slots < names * 2) slots *= 2;
   if (slots != slots_.size()) grow(slots);
-  texts_.reserve(names);
+  make_room(texts_, names);
 }
 
 std::size_t NameTable::slot_of(std::string_view text, std::uint32_t hash) const {
@@ -56,7 +65,9 @@ std::size_t NameTable::slot_of(std::string_view text, std::uint32_t hash) const 
 }
 
 void NameTable::grow(std::size_t slots) {
-  std::vector<Slot> old(slots);
+  std::vector<Slot> old;
+  make_room(old, slots);
+  old.resize(slots);
   old.swap(slots_);
   const std::size_t mask = slots_.size() - 1;
   for (const Slot& slot : old) {
@@ -69,9 +80,11 @@ void NameTable::grow(std::size_t slots) {
 
 std::string_view NameTable::keep(std::string_view text) {
   if (text.size() > block_left_) {
-    const std::size_t bytes = std::max(block_bytes, text.size());
-    blocks_.push_back(std::make_unique<char[]>(bytes));
+    const std::size_t bytes = std::max(std::clamp(kept_bytes_, least_block, largest_block), text.size());
+    kept_bytes_ += bytes;
+    blocks_.push_back(std::make_unique_for_overwrite<char[]>(bytes));
     block_next_ = blocks_.back().get();
+    prefer_large_pages(block_next_, bytes);
     block_left_ = bytes;
   }
   char* const start = block_next_;

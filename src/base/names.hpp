@@ -46,6 +46,7 @@ class NameTable {
   std::vector<Slot> slots_;
   std::vector<std::string_view> texts_;
   std::vector<std::unique_ptr<char[]>> blocks_;
+  std::size_t kept_bytes_ = 0;  // in all blocks
   std::size_t block_left_ = 0;
   char* block_next_ = nullptr;
 };

@@ -36,7 +36,8 @@ struct Meaning {
   std::function<std::variant<model::Number, std::string>(base::NameId)> parameter;
   std::function<std::variant<model::NetId, std::string>(base::NameId)> net;
   std::function<std::variant<model::ElementId, std::string>(base::NameId)> source;
-  double temperature = 27;  // degC
+  std::function<std::string(base::NameId)> unknown_function;  // what to say of a function that is not known
+  double temperature = 27;                                    // degC
   Literals literals = Literals::builder;
 };
 

@@ -87,7 +87,8 @@ class Reducer {
       case Op::variable:
         return leaf(node);
       case Op::user_call:
-        return fail("this function is not known", node.offset);
+        return fail(meaning_.unknown_function ? meaning_.unknown_function(node.name) : "this function is not known",
+                    node.offset);
       default:
         return fold_operator(node, depth);
     }

@@ -87,7 +87,7 @@ Elements::Given Elements::device_parameters(const Frame& frame, const model::Ele
     const Reading reading = values_.read(frame, assignment, card.card, Letter::other);
     const auto* const quantity = std::get_if<Quantity>(&reading);
     if (!lists(shape.kept, key) || std::holds_alternative<NoValue>(reading)) {
-      say_unknown(frame, card, assignment.key);
+      say_left_out(frame, card, assignment.key, "not known for its kind, or without a number");
       continue;
     }
     if (std::holds_alternative<Failed>(reading)) return Given::failed;
@@ -99,10 +99,10 @@ Elements::Given Elements::device_parameters(const Frame& frame, const model::Ele
   return Given::numbers;
 }
 
-void Elements::say_unknown(const Frame& frame, const model::ElementCard& card, const model::Word& key) {
-  work_.problems.say(
-      ProblemKind::device, base::Level::note, work_.place(card.card, key), frame.instance,
-      fmt::format("{} is used without {}: not known for its kind", work_.shown(card.name), work_.shown(key.name)));
+void Elements::say_left_out(const Frame& frame, const model::ElementCard& card, const model::Word& key,
+                            std::string_view why) {
+  work_.problems.say(ProblemKind::device, base::Level::note, work_.place(card.card, key), frame.instance,
+                     fmt::format("{} is used without {}: {}", work_.shown(card.name), work_.shown(key.name), why));
 }
 
 }  // namespace flatten

@@ -58,7 +58,7 @@ class Elements {
   Outcome device(const Frame& frame, const model::ElementCard& card);
   enum class Given : std::uint8_t { numbers, swept, failed };
   Given device_parameters(const Frame& frame, const model::ElementCard& card, model::Device& device);
-  void say_unknown(const Frame& frame, const model::ElementCard& card, const model::Word& key);
+  void say_left_out(const Frame& frame, const model::ElementCard& card, const model::Word& key, std::string_view why);
 
   // sources.cpp
   Outcome source_part(const Frame& frame, const model::ElementCard& card, model::Element& element);

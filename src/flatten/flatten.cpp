@@ -2,8 +2,8 @@
 
 #include <algorithm>
 
+#include "base/pages.hpp"
 #include "flatten/instances.hpp"
-#include "flatten/pages.hpp"
 
 namespace flatten {
 namespace {
@@ -15,9 +15,9 @@ void reserve(Work& work) {
   const model::Scope& top = work.netlist.scopes.front();
   const std::uint64_t all = work.library.size_of(model::ScopeId{0}, work.limits.nesting);
   const std::size_t elements = static_cast<std::size_t>(std::min(all, work.limits.elements));
-  make_room(work.circuit.elements, elements);
-  make_room(work.circuit.pins, 2 * elements + elements / 2);
-  make_room(work.circuit.nets, elements);
+  base::make_room(work.circuit.elements, elements);
+  base::make_room(work.circuit.pins, 2 * elements + elements / 2);
+  base::make_room(work.circuit.nets, elements);
   if (elements > 2 * top.elements.size()) work.names.reserve(work.names.size() + 2 * elements);
 }
 

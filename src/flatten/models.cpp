@@ -105,7 +105,8 @@ void Models::say_left_out(const Frame& frame, const model::ModelCard& card, cons
     list += (list.empty() ? "" : ", ") + work_.shown(names[i]);
   if (names.size() > most) list += fmt::format(" and {} more", names.size() - most);
   work_.problems.say(ProblemKind::model, base::Level::note, work_.netlist.span(card.card), frame.instance,
-                     fmt::format("model {} is used without {}: not known for its type", work_.shown(card.name), list));
+                     fmt::format("model {} is used without {}: not known for its type, or without a number",
+                                 work_.shown(card.name), list));
 }
 
 }  // namespace flatten

@@ -289,6 +289,9 @@ expression::Meaning Parameters::meaning(const Definition& asking) {
     if (const auto net = work_.wiring.named(asking.frame->scope, name, asking.frame->nets)) return *net;
     return fmt::format("no element has a net {}", work_.shown(name));
   };
+  meaning.unknown_function = [this](base::NameId name) {
+    return fmt::format("the function {} is not known", work_.shown(name));
+  };
   meaning.source = [this, &asking](base::NameId name) -> std::variant<model::ElementId, std::string> {
     if (const model::ElementId found = source(*asking.frame, name); found.valid()) return found;
     return fmt::format("there is no voltage source {} here", work_.shown(name));

@@ -141,7 +141,7 @@ Elements::Outcome Elements::independent(const Frame& frame, const model::Element
   const auto& quantity = std::get<Quantity>(reading);
   suspect(quantity);
   const model::Assignment* const series = parameter(card, "rser");
-  if (card.letter == 'v' && series != nullptr) say_unknown(frame, card, series->key);
+  if (card.letter == 'v' && series != nullptr) say_left_out(frame, card, series->key, "sources are ideal");
   if (card.letter == 'v') return model::VoltageSource{quantity.number};
   return model::CurrentSource{quantity.number};
 }

@@ -95,7 +95,7 @@ TEST_CASE("an inductor with a series resistance is that resistance at DC") {
   d.element("V1", "a 0", 3.3, "", {{"Rser", 0.05}});
   d.flatten();
   CHECK(d.ohms("L1") == 0.25);
-  CHECK(d.said() == "note at 110: V1 is used without Rser: not known for its kind\n");
+  CHECK(d.said() == "note at 110: V1 is used without Rser: sources are ideal\n");
 }
 
 TEST_CASE("a part without a value, or with a word in its place, is kept without a model") {

@@ -28,7 +28,7 @@ TEST_CASE("a device keeps what counts at DC, drops charges in silence, and notes
   CHECK(listed(d, d.circuit.models[0]) == "is n ");
   CHECK(d.circuit.models[0].type == model::DeviceType::diode);
   CHECK(std::get<model::Device>(d.at("D2").part).model == model::DeviceModelId{0});
-  CHECK(d.said() == "note at 0: model DX is used without wobble, zap: not known for its type\n");
+  CHECK(d.said() == "note at 0: model DX is used without wobble, zap: not known for its type, or without a number\n");
 }
 
 TEST_CASE("each letter takes the types of its kind") {
@@ -93,7 +93,7 @@ TEST_CASE("a model parameter of another level is left out with a note") {
   d.model("MX", "NMOS", {{"level", 1.0}, {"theta", 0.1}});
   d.part("M1", "a b c e", "MX");
   d.flatten();
-  CHECK(d.said() == "note at 0: model MX is used without theta: not known for its type\n");
+  CHECK(d.said() == "note at 0: model MX is used without theta: not known for its type, or without a number\n");
 }
 
 TEST_CASE("an element's own parameter that its kind has not is left out with a note") {
@@ -102,7 +102,7 @@ TEST_CASE("an element's own parameter that its kind has not is left out with a n
   d.part("D1", "a k", "DX", {{"area", 2.0}, {"wobble", 1.0}, {"temp", 50.0}});
   d.flatten();
   CHECK(std::get<model::Device>(d.at("D1").part).parameters.count == 1);
-  CHECK(d.said() == "note at 120: D1 is used without wobble: not known for its kind\n");
+  CHECK(d.said() == "note at 120: D1 is used without wobble: not known for its kind, or without a number\n");
 }
 
 TEST_CASE("a model inside a subcircuit takes its parameters from each instance, one without any is made once") {

@@ -75,14 +75,16 @@ TEST_CASE("a behavioural source of a fixed number keeps it as a tree of one node
   CHECK(d.circuit.expressions[std::get<model::Behavioural>(d.at("E1").part).expression].number == 1.5);
 }
 
-TEST_CASE("an expression of a net that no element has is an error, and of an unknown source too") {
+TEST_CASE("an expression of a net that no element has is an error, and so is an unknown source or function") {
   Deck d;
   d.element("B1", "a 0", d.tree.volts("nowhere"));
   d.element("B2", "b 0", d.tree.named(Op::amperes, "V9"));
+  d.element("B3", "c 0", d.tree.named(Op::user_call, "lookup"));
   d.flatten();
   CHECK(d.said() ==
         "error at 0: no element has a net nowhere\n"
-        "error at 10: there is no voltage source V9 here\n");
+        "error at 10: there is no voltage source V9 here\n"
+        "error at 20: the function lookup is not known\n");
 }
 
 TEST_CASE("a current source that is its own voltage by a resistance is a resistor") {

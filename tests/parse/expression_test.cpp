@@ -1,9 +1,9 @@
-#include "parse/expression.hpp"
+#include "parse/expression/expression.hpp"
 
 #include <catch2/catch.hpp>
 
 #include "netlist_reading.hpp"
-#include "parse/expression_functions.hpp"
+#include "parse/expression/functions.hpp"
 
 namespace {
 

@@ -1,4 +1,4 @@
-#include "parse/netlist_number.hpp"
+#include "parse/cards/number.hpp"
 
 #include <fmt/format.h>
 #include <random>
