@@ -84,7 +84,8 @@ void set_engine_gap(model::Figures& figures, const model::Input& input, const Va
   const Values exact = readings(input, closed_form);
   assert(exact.size() == simulated.size());
   for (std::size_t i = 0; i < exact.size(); ++i)
-    keep_largest(figures.engine_gap_lsb, figures.engine_gap_point, lsb_of(input, std::fabs(simulated[i] - exact[i])), i);
+    keep_largest(figures.engine_gap_lsb, figures.engine_gap_point, lsb_of(input, std::fabs(simulated[i] - exact[i])),
+                 i);
 }
 
 }  // namespace

@@ -36,7 +36,7 @@ struct Solved {
   // The bare divider at its tap: by ngspice where the arms are not linear, else in closed form. Ends left empty stand
   // for those of `nominal`.
   Volts bare;
-  std::optional<Volts> closed_form;  // the whole network again, where it is linear; nominal
+  std::optional<Volts> closed_form;       // the whole network again, where it is linear; nominal
   std::optional<Volts> closed_form_high;  // and with the leakage's two signs
   std::optional<Volts> closed_form_low;
   model::Rung rung = model::Rung::linear;

@@ -33,8 +33,8 @@ struct Compared {
 // "R7 = 14.2 kohm reaches 23 %", or empty where no resistor was found that can be varied.
 [[nodiscard]] std::string reach_text(const model::Figures& figures);
 
-// The most that any change of a resistance is known to reach: the ceiling with the open and short volts held, or more where one
-// resistor also moves those. Nothing where neither is known.
+// The most that any change of a resistance is known to reach: the ceiling with the open and short volts held, or more
+// where one resistor also moves those. Nothing where neither is known.
 [[nodiscard]] std::optional<double> ceiling_of(const model::Figures& figures);
 
 }  // namespace judge

@@ -1,4 +1,5 @@
-// The flat circuit: every instance expanded, every value a number or an expression of swept quantities and node voltages.
+// The flat circuit: every instance expanded, every value a number or an expression of swept quantities and node
+// voltages.
 #pragma once
 
 #include <cstdint>
@@ -31,15 +32,39 @@ struct Number {
   [[nodiscard]] bool fixed() const { return !residual.valid(); }
 };
 
-struct Resistor { Number ohms; };      // 0 is a short
-struct Capacitor { Number farads; };   // open at DC
-struct Inductor { Number henries; };   // a short at DC
-struct VoltageSource { Number volts; };    // pins: plus, minus; the DC value
-struct CurrentSource { Number amperes; };  // from the first pin through the source into the second
-struct VoltageControlled { Number gain; bool drives_current = false; };                   // E, G; pins: out+, out-, in+, in-
-struct CurrentControlled { Number gain; ElementId through; bool drives_current = false; };  // F, H
-struct Behavioural { ExpressionId expression; bool drives_current = false; };             // B, E/G with VALUE
-struct Device { DeviceModelId model; Range parameters; bool starts_off = false; };        // D Q J M S; in Circuit::device_parameters
+struct Resistor {
+  Number ohms;
+};  // 0 is a short
+struct Capacitor {
+  Number farads;
+};  // open at DC
+struct Inductor {
+  Number henries;
+};  // a short at DC
+struct VoltageSource {
+  Number volts;
+};  // pins: plus, minus; the DC value
+struct CurrentSource {
+  Number amperes;
+};  // from the first pin through the source into the second
+struct VoltageControlled {
+  Number gain;
+  bool drives_current = false;
+};  // E, G; pins: out+, out-, in+, in-
+struct CurrentControlled {
+  Number gain;
+  ElementId through;
+  bool drives_current = false;
+};  // F, H
+struct Behavioural {
+  ExpressionId expression;
+  bool drives_current = false;
+};  // B, E/G with VALUE
+struct Device {
+  DeviceModelId model;
+  Range parameters;
+  bool starts_off = false;
+};  // D Q J M S; in Circuit::device_parameters
 
 // Kept, but without a model: nothing is known of what it does at its pins.
 struct Unmodelled {
@@ -48,16 +73,16 @@ struct Unmodelled {
   base::NameId wanted;  // the model, subcircuit or part text that the card names, if any
 };
 
-using Part = std::variant<Resistor, Capacitor, Inductor, VoltageSource, CurrentSource, VoltageControlled, CurrentControlled,
-                          Behavioural, Device, Unmodelled>;
+using Part = std::variant<Resistor, Capacitor, Inductor, VoltageSource, CurrentSource, VoltageControlled,
+                          CurrentControlled, Behavioural, Device, Unmodelled>;
 
 struct Element {
-  base::NameId name;       // with its instance path: X1.R3
+  base::NameId name;  // with its instance path: X1.R3
   CardId card;
-  InstanceId instance;     // the innermost instance that it belongs to; none at the top level
+  InstanceId instance;          // the innermost instance that it belongs to; none at the top level
   std::uint32_t first_pin = 0;  // in Circuit::pins
   std::uint16_t pin_count = 0;
-  char letter = '?';       // of its own name, folded: the designator's first letter
+  char letter = '?';  // of its own name, folded: the designator's first letter
   Part part;
 };
 
@@ -71,7 +96,7 @@ struct Detail {
 
 // An expanded subcircuit instance.
 struct Instance {
-  base::NameId name;       // full path: X1.XRT2
+  base::NameId name;  // full path: X1.XRT2
   base::NameId subcircuit;
   CardId card;
   InstanceId parent;
@@ -88,7 +113,8 @@ struct DeviceParameter {
   double value = 0;
 };
 
-// A device model with plain numbers. Only parameters that the deck writer knows are in it; what was left out has been said.
+// A device model with plain numbers. Only parameters that the deck writer knows are in it; what was left out has been
+// said.
 struct DeviceModel {
   base::NameId name;
   DeviceType type = DeviceType::diode;
@@ -109,12 +135,14 @@ struct Net {
 
 // A parameter that the declarations sweep: Op::variable nodes with this index stand for it.
 struct SweptParameter {
-  std::string sensor;      // the declared sensor
+  std::string sensor;  // the declared sensor
   base::NameId parameter;
-  InstanceId instance;     // whose parameter it is; none: a .param of the top level
-  bool found = false;      // whether any such parameter exists
-  std::uint32_t variable = 0;  // the index of its Op::variable nodes: its own, or that of the first request for the same parameter
-  double nominal = std::numeric_limits<double>::quiet_NaN();  // its value in the netlist; NaN: it has none, or one that is itself swept
+  InstanceId instance;  // whose parameter it is; none: a .param of the top level
+  bool found = false;   // whether any such parameter exists
+  std::uint32_t variable =
+      0;  // the index of its Op::variable nodes: its own, or that of the first request for the same parameter
+  double nominal = std::numeric_limits<double>::quiet_NaN();  // its value in the netlist; NaN: it has none, or one that
+                                                              // is itself swept
 };
 
 struct Circuit {
@@ -124,11 +152,11 @@ struct Circuit {
   std::vector<Instance> instances;
   std::vector<DeviceModel> models;
   std::vector<DeviceParameter> device_parameters;
-  std::vector<Detail> details;    // ordered by element
+  std::vector<Detail> details;  // ordered by element
   std::vector<SuspectValue> suspects;
   std::vector<SweptParameter> swept;
-  ExpressionPool expressions;     // residuals and behavioural expressions; leaves are net_volts, amperes, variable
-  double temperature = 27;        // degC, of expressions that ask for it
+  ExpressionPool expressions;  // residuals and behavioural expressions; leaves are net_volts, amperes, variable
+  double temperature = 27;     // degC, of expressions that ask for it
 
   [[nodiscard]] NetId pin(const Element& element, std::size_t i) const { return pins[element.first_pin + i]; }
   [[nodiscard]] NetId pin(const Instance& instance, std::size_t i) const { return pins[instance.first_pin + i]; }

@@ -15,8 +15,8 @@ namespace model {
 
 // A part as reports name it.
 struct PartName {
-  std::string name;    // spelled as the netlist spells it, or the label of a declaration
-  ElementId element;   // none for an instance or a label
+  std::string name;   // spelled as the netlist spells it, or the label of a declaration
+  ElementId element;  // none for an instance or a label
 };
 
 // One end of a converter's range, bound.
@@ -25,7 +25,7 @@ using BoundEnd = std::variant<double, NetId>;
 // A converter input with all its keys bound and defaults filled in.
 struct Input {
   NetId net;
-  std::string name;        // the net as the netlist first spells it
+  std::string name;  // the net as the netlist first spells it
   std::string converter;
   source::Span declared_at;
   int bits = 0;
@@ -34,16 +34,22 @@ struct Input {
   double nominal_low = 0;  // volts
   double nominal_high = 0;
   double gain = 1;
-  double leakage = 0;      // A, either sign
+  double leakage = 0;  // A, either sign
   std::optional<double> input_resistance;
   ConverterError offset_error;
   std::vector<LimitSetting> limits;  // the board's, then the input's: a later one wins
   std::vector<LevelSetting> levels;
 
-  [[nodiscard]] double lsb_volts() const { return (nominal_high - nominal_low) / static_cast<double>(1ULL << bits) / gain; }
+  [[nodiscard]] double lsb_volts() const {
+    return (nominal_high - nominal_low) / static_cast<double>(1ULL << bits) / gain;
+  }
   // Volts at the pin of a reading, and back, at the nominal range.
-  [[nodiscard]] double volts_of(double reading) const { return nominal_low + reading * (nominal_high - nominal_low) / gain; }
-  [[nodiscard]] double reading_of(double volts) const { return gain * (volts - nominal_low) / (nominal_high - nominal_low); }
+  [[nodiscard]] double volts_of(double reading) const {
+    return nominal_low + reading * (nominal_high - nominal_low) / gain;
+  }
+  [[nodiscard]] double reading_of(double volts) const {
+    return gain * (volts - nominal_low) / (nominal_high - nominal_low);
+  }
 };
 
 enum class Arm : std::uint8_t { upper, lower };
@@ -53,7 +59,7 @@ struct TapCandidate {
   NetId net;
   double weight_volts = 0;  // how far the pin moves, at most over the sweep, when its off-walk branches go
   bool arm = false;
-  bool declared = false;    // a declared role settled it
+  bool declared = false;  // a declared role settled it
   std::vector<PartName> branches;
 };
 
@@ -71,15 +77,16 @@ struct SweptBranch {
 // A network with the nodes that are watched in it.
 struct ProbedNetwork {
   Network network;
-  NodeId probe;                    // the pin, or the tap of the bare divider
-  NodeId low;                      // of the converter's range, where it is a net; else none
+  NodeId probe;  // the pin, or the tap of the bare divider
+  NodeId low;    // of the converter's range, where it is a net; else none
   NodeId high;
   std::vector<SweptBranch> swept;
-  std::vector<BranchId> leakages;  // CurrentSource branches from ground into an input's node (a positive one pushes it up); nominally 0
+  std::vector<BranchId>
+      leakages;  // CurrentSource branches from ground into an input's node (a positive one pushes it up); nominally 0
   std::vector<double> leakage_amperes;  // of each, the declared magnitude
-  NodeId sensor_plus;              // the sensor's ends (of the element, instance or pair of nets); none for a rail
+  NodeId sensor_plus;                   // the sensor's ends (of the element, instance or pair of nets); none for a rail
   NodeId sensor_minus;
-  BranchId sensor;                 // the sensor's Resistor branch, where it is one
+  BranchId sensor;  // the sensor's Resistor branch, where it is one
 };
 
 struct UnmodelledTouch {
@@ -97,16 +104,17 @@ struct Divider {
   std::string upper_rail, lower_rail;
   std::optional<Arm> sensor_arm;
   std::vector<TapCandidate> candidates;
-  ProbedNetwork whole;                // everything: the pin
-  ProbedNetwork bare;                 // the arms alone: the tap
-  std::optional<OnePort> bare_form;   // absent where the arms are not linear or the sensor sees no finite resistance
-  std::optional<OnePort> sensor_form; // the same where only the sensor itself is not linear: tells what resistance it amounts to
-  std::vector<NetId> nets;            // of the whole network, rails left out
+  ProbedNetwork whole;               // everything: the pin
+  ProbedNetwork bare;                // the arms alone: the tap
+  std::optional<OnePort> bare_form;  // absent where the arms are not linear or the sensor sees no finite resistance
+  std::optional<OnePort>
+      sensor_form;          // the same where only the sensor itself is not linear: tells what resistance it amounts to
+  std::vector<NetId> nets;  // of the whole network, rails left out
 
   std::vector<UnmodelledTouch> unmodelled;
-  std::vector<SuspectValue> suspects;  // in the network
-  std::string no_divider;              // why there is none; empty where there is one
-  bool no_sensor = false;              // nothing in the divider varies
+  std::vector<SuspectValue> suspects;    // in the network
+  std::string no_divider;                // why there is none; empty where there is one
+  bool no_sensor = false;                // nothing in the divider varies
   std::vector<std::string> not_audited;  // why no result can be had, in sentences
 };
 

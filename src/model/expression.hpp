@@ -20,18 +20,62 @@ enum class Op : std::uint8_t {
   amperes,      // I(V1): the current through a voltage source; `name`, then `index` is an ElementId
   temperature,  // temp or temper, in degC
   time,         // zero: every audit is of the operating point
-  negate, logical_not,
-  add, subtract, multiply, divide, power, remainder,
-  less, less_equal, greater, greater_equal, equal, not_equal, logical_and, logical_or,
-  choose,       // a ? b : c, and if(a, b, c)
-  call,         // `function` of its arguments
-  user_call,    // a function that the netlist defines: `name` of its arguments
+  negate,
+  logical_not,
+  add,
+  subtract,
+  multiply,
+  divide,
+  power,
+  remainder,
+  less,
+  less_equal,
+  greater,
+  greater_equal,
+  equal,
+  not_equal,
+  logical_and,
+  logical_or,
+  choose,     // a ? b : c, and if(a, b, c)
+  call,       // `function` of its arguments
+  user_call,  // a function that the netlist defines: `name` of its arguments
 };
 
 // Functions of one or more arguments; the names by which netlists call them stand in the grammar's table.
 enum class Function : std::uint8_t {
-  abs, sgn, sqrt, exp, ln, log10, sin, cos, tan, asin, acos, atan, atan2, sinh, cosh, tanh, asinh, acosh, atanh,
-  floor, ceil, round, integer, min, max, pow, power_of_magnitude, signed_power, limit, step, ramp, table, nominal,
+  abs,
+  sgn,
+  sqrt,
+  exp,
+  ln,
+  log10,
+  sin,
+  cos,
+  tan,
+  asin,
+  acos,
+  atan,
+  atan2,
+  sinh,
+  cosh,
+  tanh,
+  asinh,
+  acosh,
+  atanh,
+  floor,
+  ceil,
+  round,
+  integer,
+  min,
+  max,
+  pow,
+  power_of_magnitude,
+  signed_power,
+  limit,
+  step,
+  ramp,
+  table,
+  nominal,
 };
 // power_of_magnitude: |x|^y (pwr). signed_power: sgn(x) |x|^y (pwrs). step: u(x). ramp: uramp(x).
 // limit(x, a, b): x kept between a and b. table(x, x1, y1, ...): linear between points, level outside.
@@ -45,10 +89,10 @@ struct ExpressionNode {
   base::NameId name;                 // net_volts: the first net while parsed
   base::NameId name2;                // net_volts: the second net, if any, while parsed
   std::uint32_t index = 0;
-  std::uint32_t index2 = 0;          // net_volts: NetId of the second net; ground when there is one only
+  std::uint32_t index2 = 0;  // net_volts: NetId of the second net; ground when there is one only
   double number = 0;
   double spice = 0;
-  std::uint32_t offset = 0;          // byte of its text, in the source of the card that holds it
+  std::uint32_t offset = 0;  // byte of its text, in the source of the card that holds it
 };
 
 struct ExpressionPool {

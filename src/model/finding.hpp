@@ -23,22 +23,25 @@ inline constexpr double no_limit = std::numeric_limits<double>::quiet_NaN();
 
 struct RuleText {
   RuleId id;
-  std::string_view name;      // kebab-case, published
-  base::Level level;          // where neither a declaration nor the rule itself says otherwise
-  double limit;               // NaN: none, or worked out from other declarations
+  std::string_view name;  // kebab-case, published
+  base::Level level;      // where neither a declaration nor the rule itself says otherwise
+  double limit;           // NaN: none, or worked out from other declarations
   std::string_view unit;
   std::string_view sentence;  // what a finding of this rule means
 };
 
 inline constexpr std::array rules{
 #define NO_LIMIT no_limit
-#define RULE(identifier, name, level, limit, unit, sentence) RuleText{RuleId::identifier, name, base::Level::level, limit, unit, sentence},
+#define RULE(identifier, name, level, limit, unit, sentence) \
+  RuleText{RuleId::identifier, name, base::Level::level, limit, unit, sentence},
 #include "model/rules.def"
 #undef RULE
 #undef NO_LIMIT
 };
 
-[[nodiscard]] constexpr const RuleText& rule_text(RuleId id) { return rules[static_cast<std::size_t>(id)]; }
+[[nodiscard]] constexpr const RuleText& rule_text(RuleId id) {
+  return rules[static_cast<std::size_t>(id)];
+}
 
 struct Finding {
   RuleId rule = RuleId::not_audited;
@@ -47,7 +50,7 @@ struct Finding {
   std::optional<double> limit;
   std::string unit;
   std::optional<double> at;  // measurand
-  std::string message;       // what is wrong, the figure, the limit, where, and what would help; no full stop at the end
+  std::string message;  // what is wrong, the figure, the limit, where, and what would help; no full stop at the end
   bool waived = false;
   source::Span where;
 };

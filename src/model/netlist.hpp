@@ -49,13 +49,13 @@ struct ElementCard {
   base::NameId name;
   CardId card;
   char letter = '?';
-  bool switched_off = false;   // S W: starts open
-  Range nodes;                 // in Netlist::words
-  Word reference;              // model (R C L D Q J M S W), subcircuit (X), controlling source (F H W), or a part text
+  bool switched_off = false;  // S W: starts open
+  Range nodes;                // in Netlist::words
+  Word reference;             // model (R C L D Q J M S W), subcircuit (X), controlling source (F H W), or a part text
   base::NameId second_reference;  // W: the model, beside its controlling source
-  Value value;                 // ohms, farads, henries, DC volts or amperes, gain, or the expression of a source (E G B)
-  bool drives_current = false; // B: I= rather than V=
-  Range parameters;            // in Netlist::assignments
+  Value value;  // ohms, farads, henries, DC volts or amperes, gain, or the expression of a source (E G B)
+  bool drives_current = false;  // B: I= rather than V=
+  Range parameters;             // in Netlist::assignments
 };
 
 // .model NAME TYPE (key=value ...)
@@ -82,8 +82,8 @@ struct Scope {
   std::vector<ParameterCard> defaults;    // of the .subckt card
   std::vector<ParameterCard> parameters;  // .param cards, in order
   std::vector<ModelCard> models;
-  std::vector<ElementCard> elements;      // in order
-  std::vector<ScopeId> scopes;            // subcircuits defined inside
+  std::vector<ElementCard> elements;  // in order
+  std::vector<ScopeId> scopes;        // subcircuits defined inside
 };
 
 // A note that something of the text was not followed: a control block, an analysis, a missing file.
@@ -100,7 +100,7 @@ struct Netlist {
   std::vector<Assignment> assignments;
   std::vector<OddLiteral> odd_literals;
   ExpressionPool expressions;
-  std::vector<Word> globals;      // nets of .global
+  std::vector<Word> globals;  // nets of .global
   std::vector<MissingInclude> missing_includes;
 
   [[nodiscard]] source::Span span(CardId id) const {

@@ -39,17 +39,17 @@ struct Branch {
 };
 
 struct Network {
-  std::uint32_t node_count = 1;                  // ground, node 0, included
-  std::vector<std::pair<NetId, NodeId>> nets;    // ordered by net; nets joined by shorts share a node
+  std::uint32_t node_count = 1;                // ground, node 0, included
+  std::vector<std::pair<NetId, NodeId>> nets;  // ordered by net; nets joined by shorts share a node
   std::vector<Branch> branches;
-  bool linear = true;                            // no Device and no Behavioural among the branches
+  bool linear = true;  // no Device and no Behavioural among the branches
 
   // The node of a net, or none where the net is not part of the network.
   [[nodiscard]] NodeId node_of(NetId net) const;
 };
 
-// V(Rx) = open_volts + (short_volts - open_volts) * source_ohms / (source_ohms + Rx): the one-port form of a linear network
-// with one resistance left free (the bilinear theorem for linear networks).
+// V(Rx) = open_volts + (short_volts - open_volts) * source_ohms / (source_ohms + Rx): the one-port form of a linear
+// network with one resistance left free (the bilinear theorem for linear networks).
 struct OnePort {
   double open_volts = 0;
   double short_volts = 0;

@@ -42,7 +42,8 @@ struct Plan {
   std::size_t points = 0;
   std::vector<Condition> conditions;
   std::vector<NodeId> watched;
-  std::vector<BranchId> watched_currents;  // VoltageSource branches whose current is wanted, A, from plus through the source
+  std::vector<BranchId>
+      watched_currents;  // VoltageSource branches whose current is wanted, A, from plus through the source
 };
 
 }  // namespace model

@@ -17,27 +17,27 @@ namespace model {
 
 struct AuditedInput {
   Divider divider;
-  bool audited = false;         // false: there is no result
+  bool audited = false;  // false: there is no result
   std::optional<Sweep> sweep;
   Figures figures;
   FindingList findings;
 };
 
 struct BoardReport {
-  std::string netlist;          // as given on the command line
+  std::string netlist;  // as given on the command line
   ReadingCount reading;
   std::vector<AuditedInput> inputs;
-  FindingList findings;         // of the board as a whole
-  std::vector<std::string> not_checked;  // declared, but no rule of this version looks at it
-  bool done_in_whole = true;    // false: exit status 2
+  FindingList findings;                    // of the board as a whole
+  std::vector<std::string> not_checked;    // declared, but no rule of this version looks at it
+  bool done_in_whole = true;               // false: exit status 2
   std::map<NetId, std::string> net_names;  // of every net that a divider names: tap, candidates, nets; ground is "0"
-  source::Sources sources;      // the texts that places point into
+  source::Sources sources;                 // the texts that places point into
 };
 
 struct RunReport {
   std::string version;
-  std::string simulator;        // "ngspice-39", or empty where none ran
-  std::string as_of;            // ISO 8601 date
+  std::string simulator;  // "ngspice-39", or empty where none ran
+  std::string as_of;      // ISO 8601 date
   std::vector<BoardReport> boards;
 };
 

@@ -56,9 +56,9 @@ struct ConverterKeys {
   Maybe<double> pin_current;         // A
   Maybe<double> injection_total;     // A
   Maybe<ConverterError> offset_error;
-  Maybe<double> gain_error;          // a fraction
+  Maybe<double> gain_error;  // a fraction
   Maybe<ConverterError> inl;
-  Maybe<double> reference_tolerance; // a fraction
+  Maybe<double> reference_tolerance;  // a fraction
   Maybe<ConverterError> noise;
   Maybe<double> average;
 };

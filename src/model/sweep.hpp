@@ -17,8 +17,9 @@ struct Solution {
   std::vector<double> volts;
   std::vector<double> amperes;
   Rung rung = Rung::linear;
-  bool stepped = false;          // the last rung needed gmin or source stepping
-  double alone_difference = 0;   // V, largest difference of first, last and extreme points solved again alone (nonlinear)
+  bool stepped = false;  // the last rung needed gmin or source stepping
+  double alone_difference =
+      0;  // V, largest difference of first, last and extreme points solved again alone (nonlinear)
 };
 
 // A solved plan, or why there is no solution: one sentence without a full stop.

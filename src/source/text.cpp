@@ -16,7 +16,9 @@ std::vector<std::uint32_t> index_lines(std::string_view bytes) {
   return starts;
 }
 
-bool continues_utf8(char c) { return (static_cast<unsigned char>(c) & 0xC0U) == 0x80U; }
+bool continues_utf8(char c) {
+  return (static_cast<unsigned char>(c) & 0xC0U) == 0x80U;
+}
 
 }  // namespace
 

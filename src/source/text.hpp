@@ -32,7 +32,8 @@ struct Span {
   [[nodiscard]] bool valid() const { return begin.valid(); }
 };
 
-// What a person counts: both from 1. A column counts bytes, as compilers do; a continuation byte of UTF-8 is not counted.
+// What a person counts: both from 1. A column counts bytes, as compilers do; a continuation byte of UTF-8 is not
+// counted.
 struct Position {
   std::size_t line = 1;
   std::size_t column = 1;

@@ -14,7 +14,8 @@ namespace fs = std::filesystem;
 
 using Rooms = std::set<std::string>;
 
-// Each room with the rooms that it may include: base <- source <- model <- expression <- {network, sensor} <- stages <- audit <- app.
+// Each room with the rooms that it may include: base <- source <- model <- expression <- {network, sensor} <- stages <-
+// audit <- app.
 const std::map<std::string, Rooms>& allowed() {
   static const std::map<std::string, Rooms> edges = [] {
     std::map<std::string, Rooms> out;
@@ -42,7 +43,9 @@ const std::map<std::string, Rooms>& allowed() {
   return edges;
 }
 
-std::string room_of(const std::string& path) { return path.substr(0, path.find('/')); }
+std::string room_of(const std::string& path) {
+  return path.substr(0, path.find('/'));
+}
 
 // Every quoted include of a file that names a folder.
 std::vector<std::string> includes_of(const fs::path& file) {

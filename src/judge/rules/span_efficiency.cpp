@@ -6,7 +6,8 @@
 namespace judge::rules {
 namespace {
 
-// Where span-use warns, it says the same and more. Where it only notes that its limit is out of reach, what could be reached still counts.
+// Where span-use warns, it says the same and more. Where it only notes that its limit is out of reach, what could be
+// reached still counts.
 bool beside_span_use(const model::Input& input, const model::Figures& figures) {
   const double limit = limit_of(input, model::RuleId::span_use);
   const bool warned = *figures.span_use < limit && ceiling_of(figures).value_or(limit) >= limit;
