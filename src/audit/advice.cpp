@@ -2,10 +2,9 @@
 
 #include <algorithm>
 #include <cmath>
-#include <limits>
-
 #include <fmt/format.h>
 #include <fmt/ranges.h>
+#include <limits>
 
 #include "advise/reach.hpp"
 #include "judge/judge.hpp"
@@ -31,7 +30,8 @@ std::optional<double> ceiling(const model::Divider& divider, const Prepared& pre
 
 void add_reach(const model::Divider& divider, const Prepared& prepared, model::Figures& figures) {
   if (!divider.bare.network.linear || prepared.swept.empty()) return;
-  const auto reach = advise::best_resistor(divider, prepared.swept, judge::limit_of(divider.input, model::RuleId::rail_gap));
+  const auto reach =
+      advise::best_resistor(divider, prepared.swept, judge::limit_of(divider.input, model::RuleId::rail_gap));
   if (!reach) return;
   figures.span_reachable = reach->span_use;
   figures.best_part = reach->part;
@@ -46,7 +46,8 @@ std::vector<model::Override> at_point(const Prepared& prepared, std::size_t poin
   return held;
 }
 
-// Of a linear network the resistance at the pin is a ratio of linear functions of the sensor's, so its largest is at an end.
+// Of a linear network the resistance at the pin is a ratio of linear functions of the sensor's, so its largest is at an
+// end.
 void add_source_ohms(const model::Divider& divider, const Prepared& prepared, model::Figures& figures) {
   if (!divider.whole.network.linear || prepared.swept.empty()) return;
   const auto& values = prepared.swept.front().values;
@@ -59,8 +60,8 @@ void add_source_ohms(const model::Divider& divider, const Prepared& prepared, mo
   }
 }
 
-// Finds what moves the pin most from the bare divider, at the point where the load error is worst: each suspect is taken out
-// of the network in turn.
+// Finds what moves the pin most from the bare divider, at the point where the load error is worst: each suspect is
+// taken out of the network in turn.
 class LoadSearch {
  public:
   LoadSearch(const model::Divider& divider, const Prepared& prepared, const judge::Solved& solved, std::size_t point)
@@ -90,7 +91,8 @@ class LoadSearch {
   }
 
   [[nodiscard]] const model::PartName* load_part(model::ElementId element) const {
-    const auto at = std::find_if(divider_.load.begin(), divider_.load.end(), [element](const model::PartName& part) { return part.element == element; });
+    const auto at = std::find_if(divider_.load.begin(), divider_.load.end(),
+                                 [element](const model::PartName& part) { return part.element == element; });
     return at == divider_.load.end() || !element.valid() ? nullptr : &*at;
   }
 
@@ -100,14 +102,17 @@ class LoadSearch {
     double value = std::numeric_limits<double>::infinity();
     if (branch.origin == model::BranchOrigin::input_resistance) name = "the input resistance";
     if (branch.origin == model::BranchOrigin::rail_resistance) name = "the source resistance of a rail", value = 0;
-    if (const model::PartName* part = load_part(branch.element); part != nullptr && std::holds_alternative<model::Resistor>(branch.part)) name = part->name;
+    if (const model::PartName* part = load_part(branch.element);
+        part != nullptr && std::holds_alternative<model::Resistor>(branch.part))
+      name = part->name;
     if (name.empty()) return;
     if (const auto volts = pin_volts({{id, value}})) offer(name, std::fabs(*volts - all));
   }
 
   void try_leakage(double all) {
     std::vector<model::Override> leaks;
-    for (std::size_t i = 0; i < whole_.leakages.size(); ++i) leaks.push_back({whole_.leakages[i], whole_.leakage_amperes[i]});
+    for (std::size_t i = 0; i < whole_.leakages.size(); ++i)
+      leaks.push_back({whole_.leakages[i], whole_.leakage_amperes[i]});
     if (leaks.empty()) return;
     if (const auto volts = pin_volts(leaks)) offer("leakage", std::fabs(*volts - all));
   }
@@ -116,7 +121,9 @@ class LoadSearch {
   [[nodiscard]] std::string device_names() const {
     std::vector<std::string> names;
     for (const auto& branch : whole_.network.branches)
-      if (const auto* part = load_part(branch.element); part != nullptr && std::holds_alternative<model::Device>(branch.part)) names.push_back(part->name);
+      if (const auto* part = load_part(branch.element);
+          part != nullptr && std::holds_alternative<model::Device>(branch.part))
+        names.push_back(part->name);
     return fmt::format("{}", fmt::join(names, ", "));
   }
 

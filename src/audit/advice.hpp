@@ -1,5 +1,5 @@
-// What a reviewer wants beside the figures of the curve: ceilings, a better resistor, the source resistance at the pin, the
-// largest load.
+// What a reviewer wants beside the figures of the curve: ceilings, a better resistor, the source resistance at the pin,
+// the largest load.
 #pragma once
 
 #include "audit/plans.hpp"

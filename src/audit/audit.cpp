@@ -1,11 +1,10 @@
 #include "audit/audit.hpp"
 
 #include <algorithm>
+#include <fmt/format.h>
 #include <map>
 #include <unordered_set>
 #include <utility>
-
-#include <fmt/format.h>
 
 #include "audit/reading.hpp"
 #include "audit/solving.hpp"
@@ -23,7 +22,8 @@ judge::BoardFacts facts_of(const Reading& reading, const model::Division& divisi
   facts.netlist = {{reading.netlist.root, 0}, 0};
   facts.levels = reading.sheet.levels;
   for (std::uint32_t i = 0; i < reading.netlist.cards.size(); ++i)
-    if (reading.netlist.cards[i].fate == model::CardFate::error) facts.unreadable.push_back(reading.netlist.span(model::CardId{i}));
+    if (reading.netlist.cards[i].fate == model::CardFate::error)
+      facts.unreadable.push_back(reading.netlist.span(model::CardId{i}));
   for (const auto& missing : reading.netlist.missing_includes)
     facts.missing_includes.push_back({missing.where, std::string(reading.sources.text(missing.where))});
   for (const auto& assumption : division.assumptions) facts.assumptions.push_back(assumption.text);
@@ -42,7 +42,8 @@ judge::BoardFacts facts_of(const Reading& reading, const model::Division& divisi
 
 std::vector<std::string> not_checked(const model::Sheet& sheet) {
   std::vector<std::string> lines;
-  for (const auto& key : sheet.unused) lines.push_back(fmt::format("{}: {}", base::printable_short(key.key), key.missing));
+  for (const auto& key : sheet.unused)
+    lines.push_back(fmt::format("{}: {}", base::printable_short(key.key), key.missing));
   return lines;
 }
 
@@ -61,7 +62,10 @@ bool worth_auditing(Reading& reading, model::BoardReport& report) {
   if (count.cards == 0) return complain(reading, report, "the netlist has no cards"), false;
   if (count.error == count.cards) return complain(reading, report, "no card of the netlist could be read"), false;
   if (reading.sheet.converters.empty())
-    return complain(reading, report, "no converter is declared, so there is no input to audit: declare [converter.NAME] with bits, high and inputs"), false;
+    return complain(reading, report,
+                    "no converter is declared, so there is no input to audit: declare [converter.NAME] with bits, high "
+                    "and inputs"),
+           false;
   return true;
 }
 
@@ -75,7 +79,8 @@ std::string drawn(const Reading& reading) {
 void name_nets(const Reading& reading, const model::Divider& divider, model::BoardReport& report) {
   const auto name = [&](model::NetId net) {
     if (net.valid())
-      report.net_names.try_emplace(net, net == model::ground ? "0" : std::string(reading.names.text(reading.circuit.nets[net.index()].name)));
+      report.net_names.try_emplace(
+          net, net == model::ground ? "0" : std::string(reading.names.text(reading.circuit.nets[net.index()].name)));
   };
   name(divider.tap);
   for (const auto& candidate : divider.candidates) name(candidate.net);
@@ -108,7 +113,9 @@ BoardRun audit_board(const std::string& netlist, const Options& options, simulat
   model::Division division;
   if (worth_auditing(reading, report)) {
     const std::size_t before = source::count(reading.diagnostics, base::Level::error);
-    division = divide::divide({reading.netlist, reading.sources, reading.circuit, reading.sheet, reading.names, options.only}, reading.diagnostics);
+    division =
+        divide::divide({reading.netlist, reading.sources, reading.circuit, reading.sheet, reading.names, options.only},
+                       reading.diagnostics);
     if (source::count(reading.diagnostics, base::Level::error) != before)
       report.done_in_whole = false;
     else if (division.dividers.empty())

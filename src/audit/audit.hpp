@@ -13,10 +13,10 @@
 namespace audit {
 
 struct Options {
-  std::vector<std::filesystem::path> with;       // further declarations
-  std::optional<std::filesystem::path> root;     // includes are read below it; default: the netlist's folder
+  std::vector<std::filesystem::path> with;    // further declarations
+  std::optional<std::filesystem::path> root;  // includes are read below it; default: the netlist's folder
   std::size_t points = 101;
-  std::vector<std::string> only;                 // globs of input names; empty: all
+  std::vector<std::string> only;  // globs of input names; empty: all
   source::Limits limits;
 };
 

@@ -19,32 +19,38 @@ std::vector<model::NodeId> watched_nodes(const model::ProbedNetwork& probed) {
 
 std::vector<model::Override> leakage_overrides(const model::ProbedNetwork& probed, double sign) {
   std::vector<model::Override> held;
-  for (std::size_t i = 0; i < probed.leakages.size(); ++i) held.push_back({probed.leakages[i], sign * probed.leakage_amperes[i]});
+  for (std::size_t i = 0; i < probed.leakages.size(); ++i)
+    held.push_back({probed.leakages[i], sign * probed.leakage_amperes[i]});
   return held;
 }
 
-std::vector<model::Condition> conditions_of(const model::ProbedNetwork& probed, std::span<const model::ConditionKind> needs) {
+std::vector<model::Condition> conditions_of(const model::ProbedNetwork& probed,
+                                            std::span<const model::ConditionKind> needs) {
   std::vector<model::Condition> conditions;
   for (const model::ConditionKind kind : needs) switch (kind) {
-      case model::ConditionKind::nominal: conditions.push_back({kind, {}}); break;
+      case model::ConditionKind::nominal:
+        conditions.push_back({kind, {}});
+        break;
       case model::ConditionKind::leakage_high:
         if (!probed.leakages.empty()) conditions.push_back({kind, leakage_overrides(probed, 1)});
         break;
       case model::ConditionKind::leakage_low:
         if (!probed.leakages.empty()) conditions.push_back({kind, leakage_overrides(probed, -1)});
         break;
-      case model::ConditionKind::bare: break;  // has a network of its own
+      case model::ConditionKind::bare:
+        break;  // has a network of its own
     }
   return conditions;
 }
 
-model::Plan plan_of(const model::ProbedNetwork& probed, std::vector<model::SweptValues> swept, std::vector<model::Condition> conditions,
-                    std::size_t points) {
+model::Plan plan_of(const model::ProbedNetwork& probed, std::vector<model::SweptValues> swept,
+                    std::vector<model::Condition> conditions, std::size_t points) {
   return {probed.network, std::move(swept), points, std::move(conditions), watched_nodes(probed), {}};
 }
 
 // Splits the volts of one condition into pin and ends of the range.
-judge::Solved::Volts unpack(const model::Input& input, const model::ProbedNetwork& probed, std::span<const double> volts, std::size_t points) {
+judge::Solved::Volts unpack(const model::Input& input, const model::ProbedNetwork& probed,
+                            std::span<const double> volts, std::size_t points) {
   const std::size_t width = watched_nodes(probed).size();
   judge::Solved::Volts out;
   for (std::size_t p = 0; p < points; ++p) {
@@ -57,7 +63,8 @@ judge::Solved::Volts unpack(const model::Input& input, const model::ProbedNetwor
 }
 
 base::Result<judge::Solved::Volts> closed_form(const model::Input& input, const model::ProbedNetwork& probed,
-                                               std::span<const model::SweptValues> swept, std::size_t points, network::Overrides held) {
+                                               std::span<const model::SweptValues> swept, std::size_t points,
+                                               network::Overrides held) {
   const auto watched = watched_nodes(probed);
   auto volts = network::sweep_volts(probed.network, swept, points, held, watched);
   if (!volts.ok()) return base::Error{volts.error()};
@@ -72,7 +79,8 @@ std::vector<double> effective_ohms(const model::OnePort& form, std::span<const d
 }
 
 // Error: a linear network that the simulator solved and the closed form could not: neither is to be trusted then.
-base::Result<base::Done> unpack_conditions(const model::Divider& divider, const Prepared& prepared, const model::Plan& plan, const model::Solution& whole,
+base::Result<base::Done> unpack_conditions(const model::Divider& divider, const Prepared& prepared,
+                                           const model::Plan& plan, const model::Solution& whole,
                                            judge::Solved& solved) {
   const std::size_t points = prepared.at.size();
   const std::size_t width = plan.watched.size() * points;
@@ -87,10 +95,16 @@ base::Result<base::Done> unpack_conditions(const model::Divider& divider, const 
       closed = std::move(*form);
     }
     switch (condition.kind) {
-      case model::ConditionKind::leakage_high: solved.leakage_high = std::move(unpacked), solved.closed_form_high = std::move(closed); break;
-      case model::ConditionKind::leakage_low: solved.leakage_low = std::move(unpacked), solved.closed_form_low = std::move(closed); break;
+      case model::ConditionKind::leakage_high:
+        solved.leakage_high = std::move(unpacked), solved.closed_form_high = std::move(closed);
+        break;
+      case model::ConditionKind::leakage_low:
+        solved.leakage_low = std::move(unpacked), solved.closed_form_low = std::move(closed);
+        break;
       case model::ConditionKind::nominal:
-      case model::ConditionKind::bare: solved.nominal = std::move(unpacked), solved.closed_form = std::move(closed); break;
+      case model::ConditionKind::bare:
+        solved.nominal = std::move(unpacked), solved.closed_form = std::move(closed);
+        break;
     }
   }
   return base::Done{};
@@ -98,8 +112,9 @@ base::Result<base::Done> unpack_conditions(const model::Divider& divider, const 
 
 }  // namespace
 
-base::Result<Prepared> prepare(const model::Divider& divider, const model::Circuit& circuit, const model::SensorDeclaration& sensor,
-                               std::span<const model::ConditionKind> needs, std::size_t points) {
+base::Result<Prepared> prepare(const model::Divider& divider, const model::Circuit& circuit,
+                               const model::SensorDeclaration& sensor, std::span<const model::ConditionKind> needs,
+                               std::size_t points) {
   Prepared prepared;
   auto at = divide::measurands(sensor, points);
   if (!at.ok()) return base::Error{at.error()};
@@ -118,15 +133,16 @@ base::Result<Prepared> prepare(const model::Divider& divider, const model::Circu
   return prepared;
 }
 
-base::Result<judge::Solved> solved_of(const model::Divider& divider, const Prepared& prepared, const model::Plan& plan, const model::Solution& whole,
-                                      const model::Solution* bare) {
+base::Result<judge::Solved> solved_of(const model::Divider& divider, const Prepared& prepared, const model::Plan& plan,
+                                      const model::Solution& whole, const model::Solution* bare) {
   judge::Solved solved;
   solved.at = prepared.at;
   solved.sensor_ohms = prepared.sensor_ohms;
   solved.rung = whole.rung;
   solved.stepped = whole.stepped;
   solved.alone_difference = whole.alone_difference;
-  if (const auto done = unpack_conditions(divider, prepared, plan, whole, solved); !done.ok()) return base::Error{done.error()};
+  if (const auto done = unpack_conditions(divider, prepared, plan, whole, solved); !done.ok())
+    return base::Error{done.error()};
   if (bare != nullptr) {
     solved.bare = unpack(divider.input, divider.bare, bare->volts, prepared.at.size());
   } else {
@@ -134,8 +150,19 @@ base::Result<judge::Solved> solved_of(const model::Divider& divider, const Prepa
     if (!volts.ok()) return base::Error{"the bare divider has no solution: " + volts.error()};
     solved.bare = std::move(*volts);
   }
-  if (solved.sensor_ohms.empty() && divider.sensor_form) solved.sensor_ohms = effective_ohms(*divider.sensor_form, solved.bare.pin);
+  // Ends with a network of their own: those of the nominal solution count.
+  if (divider.whole.low.valid() && !divider.bare.low.valid()) solved.bare.low.clear();
+  if (divider.whole.high.valid() && !divider.bare.high.valid()) solved.bare.high.clear();
+  if (solved.sensor_ohms.empty() && divider.sensor_form)
+    solved.sensor_ohms = effective_ohms(*divider.sensor_form, solved.bare.pin);
   return solved;
+}
+
+void settle_range(model::Divider& divider, const judge::Solved& solved) {
+  const std::size_t middle = solved.at.size() / 2;
+  model::Input& input = divider.input;
+  if (divider.whole.low.valid() && input.nominal_low == 0) input.nominal_low = solved.nominal.low[middle];
+  if (divider.whole.high.valid() && input.nominal_high == 0) input.nominal_high = solved.nominal.high[middle];
 }
 
 }  // namespace audit

@@ -1,10 +1,9 @@
 #include "audit/reading.hpp"
 
 #include <filesystem>
+#include <fmt/format.h>
 #include <system_error>
 #include <vector>
-
-#include <fmt/format.h>
 
 #include "base/text.hpp"
 #include "flatten/flatten.hpp"
@@ -23,7 +22,8 @@ fs::path beside(const fs::path& netlist) {
   return path.replace_extension(".tap.toml");
 }
 
-void add_sheet(const fs::path& path, const Options& options, Reading& reading, std::vector<parse::SheetSource>& places) {
+void add_sheet(const fs::path& path, const Options& options, Reading& reading,
+               std::vector<parse::SheetSource>& places) {
   auto bytes = source::read_file(path, options.limits);
   if (!bytes.ok()) {
     reading.diagnostics.push_back({base::Level::error, {}, bytes.error()});
@@ -63,9 +63,11 @@ Reading read_board(const std::string& netlist, const Options& options) {
   read_declarations(path, root, options, reading);
   const fs::path folder = path.has_parent_path() ? path.parent_path() : fs::path(".");
   const auto include = parse::files_below(options.root.value_or(folder), reading.sources, options.limits);
-  reading.netlist = parse::read_netlist(root, reading.sources, reading.names, include, options.limits, reading.diagnostics);
-  reading.circuit = flatten::flatten(reading.netlist, reading.names, {sweeps_of(reading.sheet), reading.sheet.bare_m.value}, options.limits,
-                                     reading.diagnostics);
+  reading.netlist =
+      parse::read_netlist(root, reading.sources, reading.names, include, options.limits, reading.diagnostics);
+  reading.circuit =
+      flatten::flatten(reading.netlist, reading.names, {sweeps_of(reading.sheet), reading.sheet.bare_m.value},
+                       options.limits, reading.diagnostics);
   return reading;
 }
 

@@ -23,11 +23,13 @@ struct Job {
 
 class Solving {
  public:
-  Solving(const Reading& reading, std::size_t points, model::BoardReport& report) : reading_(reading), points_(points), report_(report) {}
+  Solving(const Reading& reading, std::size_t points, model::BoardReport& report)
+      : reading_(reading), points_(points), report_(report) {}
 
   void run(simulate::Session& session) {
     for (std::size_t i = 0; i < report_.inputs.size(); ++i) prepare_input(i);
-    session.solve(plans_, reading_.circuit, reading_.names, [this](std::size_t plan, model::Outcome outcome) { take(plan, std::move(outcome)); });
+    session.solve(plans_, reading_.circuit, reading_.names,
+                  [this](std::size_t plan, model::Outcome outcome) { take(plan, std::move(outcome)); });
   }
 
  private:
@@ -69,8 +71,10 @@ class Solving {
     model::AuditedInput& input = report_.inputs[job.input];
     for (const auto* outcome : {&job.whole, &job.bare})
       if (*outcome && !(*outcome)->solution) return fail(input, (*outcome)->failure);
-    auto solved = solved_of(input.divider, job.prepared, plans_[job.whole_plan], *job.whole->solution, job.bare ? &*job.bare->solution : nullptr);
+    auto solved = solved_of(input.divider, job.prepared, plans_[job.whole_plan], *job.whole->solution,
+                            job.bare ? &*job.bare->solution : nullptr);
     if (!solved.ok()) return fail(input, solved.error());
+    settle_range(input.divider, *solved);
     const sensor::Kind* kind = sensor::find_kind(sensor_of(input.divider)->kind.value);
     input.sweep = judge::curve_of(input.divider.input, *solved, std::string(kind->measurand), std::string(kind->unit));
     input.figures = judge::figures_of(input.divider, *solved, *input.sweep);
@@ -85,7 +89,8 @@ class Solving {
   }
 
   void judge(model::AuditedInput& input) {
-    judge::judge_input(input, sensor_of(input.divider), {&reading_.netlist, &reading_.circuit, &reading_.names, &reading_.sources});
+    judge::judge_input(input, sensor_of(input.divider),
+                       {&reading_.netlist, &reading_.circuit, &reading_.names, &reading_.sources});
   }
 
   struct Owner {
@@ -104,7 +109,8 @@ class Solving {
 
 }  // namespace
 
-void solve_and_judge(const Reading& reading, std::size_t points, simulate::Session& session, model::BoardReport& report) {
+void solve_and_judge(const Reading& reading, std::size_t points, simulate::Session& session,
+                     model::BoardReport& report) {
   Solving(reading, points, report).run(session);
 }
 

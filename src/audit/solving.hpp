@@ -7,8 +7,9 @@
 
 namespace audit {
 
-// Fills curve, figures and findings of every input of the report. An input that cannot be solved says so in its divider and
-// stays not audited.
-void solve_and_judge(const Reading& reading, std::size_t points, simulate::Session& session, model::BoardReport& report);
+// Fills curve, figures and findings of every input of the report. An input that cannot be solved says so in its divider
+// and stays not audited.
+void solve_and_judge(const Reading& reading, std::size_t points, simulate::Session& session,
+                     model::BoardReport& report);
 
 }  // namespace audit

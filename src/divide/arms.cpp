@@ -82,7 +82,9 @@ class Chooser {
   }
 
   void apply_roles(model::TapCandidate& candidate, const std::vector<Edge>& branches) {
-    const auto has = [this](model::Role role) { return [this, role](Edge edge) { return role_of(graph_, edge) == role; }; };
+    const auto has = [this](model::Role role) {
+      return [this, role](Edge edge) { return role_of(graph_, edge) == role; };
+    };
     if (std::any_of(branches.begin(), branches.end(), has(model::Role::arm))) {
       candidate.arm = candidate.declared = true;
     } else if (std::all_of(branches.begin(), branches.end(), has(model::Role::load))) {
@@ -105,7 +107,8 @@ class Chooser {
       arms_.sense.insert(arms_.sense.end(), walk_.steps[i].begin(), walk_.steps[i].end());
   }
 
-  // Off the walk on the sensor's side of the tap: an arm's branch, parallel to the sensor, or parallel to a part of the walk.
+  // Off the walk on the sensor's side of the tap: an arm's branch, parallel to the sensor, or parallel to a part of the
+  // walk.
   [[nodiscard]] bool belongs(const OffWalk& off, std::size_t i) const {
     if (off.reaches_rail) {
       const auto at = std::find(places_.begin(), places_.end(), i);
@@ -129,6 +132,8 @@ class Chooser {
 
 }  // namespace
 
-Arms choose_arms(const Graph& graph, const Walk& walk, double share, const Weigh& weigh) { return Chooser(graph, walk, share, weigh).run(); }
+Arms choose_arms(const Graph& graph, const Walk& walk, double share, const Weigh& weigh) {
+  return Chooser(graph, walk, share, weigh).run();
+}
 
 }  // namespace divide

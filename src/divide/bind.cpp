@@ -1,7 +1,6 @@
 #include "divide/bind.hpp"
 
 #include <algorithm>
-
 #include <fmt/format.h>
 
 #include "base/text.hpp"
@@ -13,7 +12,8 @@ using base::printable_short;
 
 class Binder {
  public:
-  Binder(const model::Circuit& circuit, const model::Sheet& sheet, const NameIndex& index, source::Diagnostics& diagnostics)
+  Binder(const model::Circuit& circuit, const model::Sheet& sheet, const NameIndex& index,
+         source::Diagnostics& diagnostics)
       : circuit_(circuit), sheet_(sheet), index_(index), diagnostics_(diagnostics) {
     board_.removed.resize(circuit.elements.size());
     board_.roles.resize(circuit.elements.size());
@@ -33,7 +33,9 @@ class Binder {
   }
 
  private:
-  void error(source::Span where, std::string message) { diagnostics_.push_back({base::Level::error, where, std::move(message)}); }
+  void error(source::Span where, std::string message) {
+    diagnostics_.push_back({base::Level::error, where, std::move(message)});
+  }
 
   [[nodiscard]] bool is_exact(const model::PartDeclaration& part) const {
     return index_.element(part.name).valid() || index_.instance(part.name).valid();
@@ -45,7 +47,8 @@ class Binder {
     for (const auto& rail : sheet_.rails)
       if (const model::NetId net = index_.net(rail.net); net.valid()) held[net.index()] = 1;
     for (const auto& element : circuit_.elements)
-      if (std::holds_alternative<model::VoltageSource>(element.part)) held[circuit_.pin(element, 0).index()] = held[circuit_.pin(element, 1).index()] = 1;
+      if (std::holds_alternative<model::VoltageSource>(element.part))
+        held[circuit_.pin(element, 0).index()] = held[circuit_.pin(element, 1).index()] = 1;
     for (std::uint32_t i = 1; i < circuit_.nets.size(); ++i)
       if (!held[i] && is_ground_name(index_.text(model::NetId{i}))) board_.assumed_grounds.push_back(model::NetId{i});
   }
@@ -59,7 +62,8 @@ class Binder {
     bound.name = declared.name;
     if (bound.kind->moves == sensor::Moves::ohms && !law_holds(declared)) return;
     switch (bound.kind->moves) {
-      case sensor::Moves::rail: break;  // rails are bound later
+      case sensor::Moves::rail:
+        break;  // rails are bound later
       case sensor::Moves::parameter:
         if (!bind_parameter(declared, bound)) return;
         break;
@@ -82,8 +86,8 @@ class Binder {
     if (bound.element.valid()) bound.name = index_.text(bound.element);
     if (bound.instance.valid()) bound.name = index_.text(bound.instance);
     if (bound.element.valid() || bound.instance.valid()) return true;
-    error(declared.where, fmt::format("sensor \"{}\" is no element or instance of the netlist{}", printable_short(declared.name),
-                                      index_.suggest_part(declared.name)));
+    error(declared.where, fmt::format("sensor \"{}\" is no element or instance of the netlist{}",
+                                      printable_short(declared.name), index_.suggest_part(declared.name)));
     return false;
   }
 
@@ -91,11 +95,13 @@ class Binder {
     if (!find_named(declared, bound)) return false;
     take_ends(bound);
     for (std::uint32_t i = 0; i < circuit_.swept.size(); ++i)
-      if (circuit_.swept[i].sensor == declared.name && circuit_.swept[i].found) bound.variable = circuit_.swept[i].variable;
+      if (circuit_.swept[i].sensor == declared.name && circuit_.swept[i].found)
+        bound.variable = circuit_.swept[i].variable;
     if (bound.variable) return true;
     error(declared.sweep ? declared.sweep->where : declared.where,
           fmt::format("\"{}\" is no parameter of {} and no .param of the netlist",
-                      printable_short(declared.sweep ? declared.sweep->value : std::string{}), printable_short(bound.name)));
+                      printable_short(declared.sweep ? declared.sweep->value : std::string{}),
+                      printable_short(bound.name)));
     return false;
   }
 
@@ -135,7 +141,8 @@ class Binder {
     }
     const std::size_t sensor = board_.sensors.size();
     remove(bound.element, bound.instance, sensor);
-    board_.extras.push_back({model::Resistor{}, bound.plus, bound.minus, model::BranchOrigin::sensor, sensor, bound.element, bound.name});
+    board_.extras.push_back(
+        {model::Resistor{}, bound.plus, bound.minus, model::BranchOrigin::sensor, sensor, bound.element, bound.name});
     return true;
   }
 
@@ -144,7 +151,8 @@ class Binder {
                                                    : circuit_.instances[bound.instance.index()].pin_count;
     take_ends(bound);
     if (pins == 2) return true;
-    error(declared.where, fmt::format("sensor \"{}\" has {} pins; a {} has two", printable_short(bound.name), pins, declared.kind.value));
+    error(declared.where, fmt::format("sensor \"{}\" has {} pins; a {} has two", printable_short(bound.name), pins,
+                                      declared.kind.value));
     return false;
   }
 
@@ -163,35 +171,39 @@ class Binder {
     const auto elements = index_.elements(part.name);
     const auto instances = index_.instances(part.name);
     if (elements.empty() && instances.empty()) {
-      error(part.where, fmt::format("part \"{}\" matches no element or instance of the netlist{}", printable_short(part.name),
-                                    index_.suggest_part(part.name)));
+      error(part.where, fmt::format("part \"{}\" matches no element or instance of the netlist{}",
+                                    printable_short(part.name), index_.suggest_part(part.name)));
       return;
     }
     for (const model::ElementId element : elements) {
       if (part.role) board_.roles[element.index()] = part.role->value;
       const auto& e = circuit_.elements[element.index()];
-      stand_in(part, element, {}, e.pin_count, e.pin_count == 2 ? circuit_.pin(e, 0) : model::NetId{}, e.pin_count == 2 ? circuit_.pin(e, 1) : model::NetId{});
+      stand_in(part, element, {}, e.pin_count, e.pin_count == 2 ? circuit_.pin(e, 0) : model::NetId{},
+               e.pin_count == 2 ? circuit_.pin(e, 1) : model::NetId{});
     }
     for (const model::InstanceId instance : instances) {
       const auto& whole = circuit_.instances[instance.index()];
       if (part.role)
-        for (std::uint32_t i = 0; i < whole.element_count; ++i) board_.roles[whole.first_element + i] = part.role->value;
-      stand_in(part, {}, instance, whole.pin_count, whole.pin_count == 2 ? circuit_.pin(whole, 0) : model::NetId{}, whole.pin_count == 2 ? circuit_.pin(whole, 1) : model::NetId{});
+        for (std::uint32_t i = 0; i < whole.element_count; ++i)
+          board_.roles[whole.first_element + i] = part.role->value;
+      stand_in(part, {}, instance, whole.pin_count, whole.pin_count == 2 ? circuit_.pin(whole, 0) : model::NetId{},
+               whole.pin_count == 2 ? circuit_.pin(whole, 1) : model::NetId{});
     }
   }
 
-  void stand_in(const model::PartDeclaration& part, model::ElementId element, model::InstanceId instance, std::size_t pins,
-                model::NetId plus, model::NetId minus) {
+  void stand_in(const model::PartDeclaration& part, model::ElementId element, model::InstanceId instance,
+                std::size_t pins, model::NetId plus, model::NetId minus) {
     if (!part.model) return;
     if (part.model->value == model::StandIn::open) return remove(element, instance, std::nullopt);
     if (pins != 2) {
-      error(part.model->where, fmt::format("part \"{}\" has {} pins; a resistor has two", printable_short(part.name), pins));
+      error(part.model->where,
+            fmt::format("part \"{}\" has {} pins; a resistor has two", printable_short(part.name), pins));
       return;
     }
     remove(element, instance, std::nullopt);
     const std::string_view name = element.valid() ? index_.text(element) : index_.text(instance);
-    board_.extras.push_back({model::Resistor{{part.ohms ? part.ohms->value : 0, {}}}, plus, minus, model::BranchOrigin::stand_in, std::nullopt,
-                             element, std::string(name)});
+    board_.extras.push_back({model::Resistor{{part.ohms ? part.ohms->value : 0, {}}}, plus, minus,
+                             model::BranchOrigin::stand_in, std::nullopt, element, std::string(name)});
   }
 
   const model::Circuit& circuit_;
@@ -203,7 +215,8 @@ class Binder {
 
 }  // namespace
 
-Board bind_parts(const model::Circuit& circuit, const model::Sheet& sheet, const NameIndex& index, source::Diagnostics& diagnostics) {
+Board bind_parts(const model::Circuit& circuit, const model::Sheet& sheet, const NameIndex& index,
+                 source::Diagnostics& diagnostics) {
   return Binder(circuit, sheet, index, diagnostics).run();
 }
 

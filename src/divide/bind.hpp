@@ -17,10 +17,10 @@ namespace divide {
 struct BoundSensor {
   std::size_t declaration = 0;  // in Sheet::sensors
   const sensor::Kind* kind = nullptr;
-  std::string name;             // as the netlist spells it, or the label
-  model::ElementId element;     // at most one of element and instance is valid
+  std::string name;          // as the netlist spells it, or the label
+  model::ElementId element;  // at most one of element and instance is valid
   model::InstanceId instance;
-  model::NetId plus;            // its two ends; none for a rail and for an instance with other than two pins
+  model::NetId plus;  // its two ends; none for a rail and for an instance with other than two pins
   model::NetId minus;
   std::optional<std::uint32_t> variable;  // kind "parameter": of its Op::variable nodes
 };
@@ -48,6 +48,6 @@ struct Board {
 
 // Names that match nothing, and declarations that cannot hold for what they name, are error diagnostics at their place.
 [[nodiscard]] Board bind_parts(const model::Circuit& circuit, const model::Sheet& sheet, const NameIndex& index,
-                         source::Diagnostics& diagnostics);
+                               source::Diagnostics& diagnostics);
 
 }  // namespace divide

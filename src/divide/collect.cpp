@@ -11,7 +11,8 @@ namespace divide {
 namespace {
 
 // Calls visit(net) and visit_source(element) for every leaf of a flat expression that looks at the circuit.
-void for_each_leaf(const model::ExpressionPool& pool, model::ExpressionId tree, const std::function<void(model::NetId)>& visit,
+void for_each_leaf(const model::ExpressionPool& pool, model::ExpressionId tree,
+                   const std::function<void(model::NetId)>& visit,
                    const std::function<void(model::ElementId)>& visit_source) {
   std::vector<model::ExpressionId> open{tree};
   while (!open.empty()) {
@@ -74,7 +75,8 @@ class Collector {
     if (const auto* controlled = std::get_if<model::CurrentControlled>(&part)) take_measured(controlled->through);
     if (const auto* behavioural = std::get_if<model::Behavioural>(&part))
       for_each_leaf(
-          graph_.circuit().expressions, behavioural->expression, [&](model::NetId net) { meet(graph_.nodes().of(net)); },
+          graph_.circuit().expressions, behavioural->expression,
+          [&](model::NetId net) { meet(graph_.nodes().of(net)); },
           [&](model::ElementId source) { take_measured(source); });
   }
 
@@ -125,7 +127,8 @@ class Builder {
       top = model::NodeId{built_.network.node_count++};
       push({model::Resistor{{rail.ohms, {}}}, {top, id}, 2, model::BranchOrigin::rail_resistance, {}, {}});
     }
-    const auto source = push({model::VoltageSource{rail.volts}, {top, model::ground_node}, 2, model::BranchOrigin::rail, {}, {}});
+    const auto source =
+        push({model::VoltageSource{rail.volts}, {top, model::ground_node}, 2, model::BranchOrigin::rail, {}, {}});
     built_.rails.emplace_back(*graph_.rails().of[rail.node], source);
   }
 
@@ -140,15 +143,16 @@ class Builder {
       built_.network.linear = false;
     if (const auto* behavioural = std::get_if<model::Behavioural>(&branch.part))
       for_each_leaf(
-          graph_.circuit().expressions, behavioural->expression, [&](model::NetId net) { number(graph_.nodes().of(net)); },
-          [](model::ElementId) {});
+          graph_.circuit().expressions, behavioural->expression,
+          [&](model::NetId net) { number(graph_.nodes().of(net)); }, [](model::ElementId) {});
     built_.edges.emplace_back(edge, push(std::move(branch)));
   }
 
   // A current-controlled source names the branch whose current it follows.
   void link(Edge edge, model::BranchId branch) {
     const auto* controlled = std::get_if<model::CurrentControlled>(&graph_.part(edge));
-    if (controlled != nullptr) built_.network.branches[branch.index()].through = built_.branch(controlled->through.value);
+    if (controlled != nullptr)
+      built_.network.branches[branch.index()].through = built_.branch(controlled->through.value);
   }
 
   const Graph& graph_;
@@ -160,7 +164,8 @@ class Builder {
 }  // namespace
 
 model::NodeId Built::node(Node node) const {
-  const auto at = std::lower_bound(nodes.begin(), nodes.end(), node, [](const auto& entry, Node wanted) { return entry.first < wanted; });
+  const auto at = std::lower_bound(nodes.begin(), nodes.end(), node,
+                                   [](const auto& entry, Node wanted) { return entry.first < wanted; });
   return at != nodes.end() && at->first == node ? at->second : model::NodeId{};
 }
 
@@ -169,7 +174,9 @@ model::BranchId Built::branch(Edge edge) const {
   return at != edges.end() ? at->second : model::BranchId{};
 }
 
-Surroundings collect(const Graph& graph, std::span<const Node> starts) { return Collector(graph).run(starts); }
+Surroundings collect(const Graph& graph, std::span<const Node> starts) {
+  return Collector(graph).run(starts);
+}
 
 Built build(const Graph& graph, std::span<const Edge> edges, std::span<const Node> nodes, bool ideal_rails) {
   return Builder(graph, ideal_rails).run(edges, nodes);

@@ -1,7 +1,6 @@
 #include "divide/divide.hpp"
 
 #include <algorithm>
-
 #include <fmt/format.h>
 
 #include "base/text.hpp"
@@ -14,7 +13,8 @@ namespace divide {
 namespace {
 
 bool is_wanted(const model::Input& input, const std::vector<std::string>& only) {
-  return only.empty() || std::any_of(only.begin(), only.end(), [&](const std::string& glob) { return base::glob_match(glob, input.name); });
+  return only.empty() || std::any_of(only.begin(), only.end(),
+                                     [&](const std::string& glob) { return base::glob_match(glob, input.name); });
 }
 
 }  // namespace
@@ -29,12 +29,15 @@ model::Division divide(const Request& request, source::Diagnostics& diagnostics)
 
   model::Division division;
   for (const model::NetId net : board.assumed_grounds)
-    division.assumptions.push_back({fmt::format("net {} is taken for ground by its name", base::printable_short(index.text(net)))});
+    division.assumptions.push_back(
+        {fmt::format("net {} is taken for ground by its name", base::printable_short(index.text(net)))});
   if (source::count(diagnostics, base::Level::error) != before) return division;
   const Graph graph(request.circuit, board, nodes, rails, index);
   const BrokenCards broken(request.netlist, request.sources, request.names);
   for (const model::Input& input : inputs)
-    if (is_wanted(input, request.only)) division.dividers.push_back(divide_input({graph, request.sheet, request.netlist, request.sources, broken, inputs}, input));
+    if (is_wanted(input, request.only))
+      division.dividers.push_back(
+          divide_input({graph, request.sheet, request.netlist, request.sources, broken, inputs}, input));
   return division;
 }
 

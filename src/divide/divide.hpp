@@ -23,8 +23,8 @@ struct Request {
   std::vector<std::string> only;  // globs of input names; empty: all
 };
 
-// Finds the divider of every declared input. Names of the sheet that match nothing in the netlist are errors with place and
-// nearest real name; with any such error no divider is given. What stands in the way of an audit of one input is
+// Finds the divider of every declared input. Names of the sheet that match nothing in the netlist are errors with place
+// and nearest real name; with any such error no divider is given. What stands in the way of an audit of one input is
 // said in its Divider.
 [[nodiscard]] model::Division divide(const Request& request, source::Diagnostics& diagnostics);
 

@@ -8,14 +8,16 @@ namespace {
 
 PinUse device_pin_use(model::DeviceType type, std::size_t pin) {
   constexpr std::size_t gate = 1;
-  if (type == model::DeviceType::nmos || type == model::DeviceType::pmos) return pin == gate ? PinUse::senses : PinUse::conducts;
+  if (type == model::DeviceType::nmos || type == model::DeviceType::pmos)
+    return pin == gate ? PinUse::senses : PinUse::conducts;
   if (type == model::DeviceType::voltage_switch) return pin >= 2 ? PinUse::senses : PinUse::conducts;
   return PinUse::conducts;
 }
 
 }  // namespace
 
-Graph::Graph(const model::Circuit& circuit, const Board& board, const Nodes& nodes, const Rails& rails, const NameIndex& index)
+Graph::Graph(const model::Circuit& circuit, const Board& board, const Nodes& nodes, const Rails& rails,
+             const NameIndex& index)
     : circuit_(circuit), board_(board), nodes_(nodes), rails_(rails), index_(index) {
   index_edges();
 }
@@ -42,7 +44,9 @@ void Graph::index_edges() {
   }
   auto next_touching = touching_.first;
   auto next_short = shorts_.first;
-  each([&](Lists& lists, Node node, Edge edge) { lists.edges[(&lists == &touching_ ? next_touching : next_short)[node]++] = edge; });
+  each([&](Lists& lists, Node node, Edge edge) {
+    lists.edges[(&lists == &touching_ ? next_touching : next_short)[node]++] = edge;
+  });
 }
 
 std::span<const Edge> Graph::edges_at(Node node) const {
@@ -60,8 +64,10 @@ Node Graph::pin(Edge edge, std::size_t i) const {
 
 PinUse Graph::pin_use(Edge edge, std::size_t i) const {
   const model::Part& it = part(edge);
-  if (std::holds_alternative<model::Capacitor>(it) || std::holds_alternative<model::Unmodelled>(it)) return PinUse::nothing;
-  if (const auto* device = std::get_if<model::Device>(&it)) return device_pin_use(circuit_.models[device->model.index()].type, i);
+  if (std::holds_alternative<model::Capacitor>(it) || std::holds_alternative<model::Unmodelled>(it))
+    return PinUse::nothing;
+  if (const auto* device = std::get_if<model::Device>(&it))
+    return device_pin_use(circuit_.models[device->model.index()].type, i);
   return i < 2 ? PinUse::conducts : PinUse::senses;
 }
 
@@ -77,9 +83,12 @@ std::uint32_t Graph::order(Edge edge) const {
 }
 
 bool Graph::is_way(Edge edge) const {
-  return std::holds_alternative<model::Resistor>(part(edge)) || std::holds_alternative<model::VoltageSource>(part(edge));
+  return std::holds_alternative<model::Resistor>(part(edge)) ||
+         std::holds_alternative<model::VoltageSource>(part(edge));
 }
 
-bool Graph::feeds(Edge edge) const { return is_way(edge) || std::holds_alternative<model::CurrentSource>(part(edge)); }
+bool Graph::feeds(Edge edge) const {
+  return is_way(edge) || std::holds_alternative<model::CurrentSource>(part(edge));
+}
 
 }  // namespace divide

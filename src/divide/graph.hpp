@@ -23,7 +23,8 @@ enum class PinUse : std::uint8_t { conducts, senses, nothing };
 
 class Graph {
  public:
-  Graph(const model::Circuit& circuit, const Board& board, const Nodes& nodes, const Rails& rails, const NameIndex& index);
+  Graph(const model::Circuit& circuit, const Board& board, const Nodes& nodes, const Rails& rails,
+        const NameIndex& index);
 
   [[nodiscard]] const model::Circuit& circuit() const { return circuit_; }
   [[nodiscard]] const Board& board() const { return board_; }
@@ -39,9 +40,15 @@ class Graph {
 
   [[nodiscard]] bool is_extra(Edge edge) const { return edge >= circuit_.elements.size(); }
   [[nodiscard]] const Extra& extra(Edge edge) const { return board_.extras[edge - circuit_.elements.size()]; }
-  [[nodiscard]] model::ElementId element(Edge edge) const { return is_extra(edge) ? extra(edge).element : model::ElementId{edge}; }
-  [[nodiscard]] const model::Part& part(Edge edge) const { return is_extra(edge) ? extra(edge).part : circuit_.elements[edge].part; }
-  [[nodiscard]] std::size_t pin_count(Edge edge) const { return is_extra(edge) ? 2 : circuit_.elements[edge].pin_count; }
+  [[nodiscard]] model::ElementId element(Edge edge) const {
+    return is_extra(edge) ? extra(edge).element : model::ElementId{edge};
+  }
+  [[nodiscard]] const model::Part& part(Edge edge) const {
+    return is_extra(edge) ? extra(edge).part : circuit_.elements[edge].part;
+  }
+  [[nodiscard]] std::size_t pin_count(Edge edge) const {
+    return is_extra(edge) ? 2 : circuit_.elements[edge].pin_count;
+  }
   [[nodiscard]] Node pin(Edge edge, std::size_t i) const;
   [[nodiscard]] PinUse pin_use(Edge edge, std::size_t i) const;
   [[nodiscard]] std::string name(Edge edge) const;
@@ -49,13 +56,15 @@ class Graph {
   // Place in the netlist's order, for lists of parts.
   [[nodiscard]] std::uint32_t order(Edge edge) const;
 
-  // Whether an edge is a way for a walk (a resistance, or a source in series), and whether it can feed a node from a rail
-  // (those, and a current source).
+  // Whether an edge is a way for a walk (a resistance, or a source in series), and whether it can feed a node from a
+  // rail (those, and a current source).
   [[nodiscard]] bool is_way(Edge edge) const;
   [[nodiscard]] bool feeds(Edge edge) const;
 
   // The other end of a two-ended edge.
-  [[nodiscard]] Node other_end(Edge edge, Node node) const { return pin(edge, 0) == node ? pin(edge, 1) : pin(edge, 0); }
+  [[nodiscard]] Node other_end(Edge edge, Node node) const {
+    return pin(edge, 0) == node ? pin(edge, 1) : pin(edge, 0);
+  }
 
  private:
   void index_edges();

@@ -1,7 +1,6 @@
 #include "divide/inputs.hpp"
 
 #include <algorithm>
-
 #include <fmt/format.h>
 
 #include "base/overloaded.hpp"
@@ -29,7 +28,8 @@ void overlay(model::ConverterKeys& keys, const model::ConverterKeys& nearer) {
 
 class Inputs {
  public:
-  Inputs(const model::Sheet& sheet, const Nodes& nodes, const Rails& rails, const NameIndex& index, source::Diagnostics& diagnostics)
+  Inputs(const model::Sheet& sheet, const Nodes& nodes, const Rails& rails, const NameIndex& index,
+         source::Diagnostics& diagnostics)
       : sheet_(sheet), nodes_(nodes), rails_(rails), index_(index), diagnostics_(diagnostics) {}
 
   std::vector<model::Input> run() {
@@ -40,29 +40,35 @@ class Inputs {
   }
 
  private:
-  void error(source::Span where, std::string message) { diagnostics_.push_back({base::Level::error, where, std::move(message)}); }
+  void error(source::Span where, std::string message) {
+    diagnostics_.push_back({base::Level::error, where, std::move(message)});
+  }
 
   void take_converter(const model::ConverterDeclaration& converter) {
     const std::size_t before = inputs_.size();
     for (const auto& wanted : converter.inputs) {
       const auto nets = index_.nets(wanted.value);
       if (nets.empty())
-        error(wanted.where, fmt::format("converter \"{}\": no net of the netlist is or fits \"{}\"{}", printable_short(converter.name),
-                                        printable_short(wanted.value), index_.suggest_net(wanted.value)));
+        error(wanted.where, fmt::format("converter \"{}\": no net of the netlist is or fits \"{}\"{}",
+                                        printable_short(converter.name), printable_short(wanted.value),
+                                        index_.suggest_net(wanted.value)));
       for (const model::NetId net : nets) take_input(converter, wanted, net);
     }
     const std::size_t count = inputs_.size() - before;
     if (converter.expect_inputs && static_cast<std::size_t>(converter.expect_inputs->value) != count)
-      error(converter.expect_inputs->where, fmt::format("converter \"{}\" has {} inputs here, {} are expected", printable_short(converter.name),
-                                                        count, converter.expect_inputs->value));
+      error(converter.expect_inputs->where,
+            fmt::format("converter \"{}\" has {} inputs here, {} are expected", printable_short(converter.name), count,
+                        converter.expect_inputs->value));
   }
 
-  void take_input(const model::ConverterDeclaration& converter, const model::Declared<std::string>& wanted, model::NetId net) {
-    const auto known = std::find_if(inputs_.begin(), inputs_.end(), [&](const model::Input& input) { return input.net == net; });
+  void take_input(const model::ConverterDeclaration& converter, const model::Declared<std::string>& wanted,
+                  model::NetId net) {
+    const auto known =
+        std::find_if(inputs_.begin(), inputs_.end(), [&](const model::Input& input) { return input.net == net; });
     if (known != inputs_.end()) {
       if (known->converter != converter.name)
-        error(wanted.where, fmt::format("net \"{}\" is an input of converter \"{}\" already", printable_short(index_.text(net)),
-                                        printable_short(known->converter)));
+        error(wanted.where, fmt::format("net \"{}\" is an input of converter \"{}\" already",
+                                        printable_short(index_.text(net)), printable_short(known->converter)));
       return;
     }
     model::Input& input = inputs_.emplace_back();
@@ -97,8 +103,10 @@ class Inputs {
     std::vector<std::string_view> candidates;
     for (const model::Input& input : inputs_) candidates.push_back(input.name);
     const std::string_view nearest = exact.valid() ? std::string_view{} : base::nearest_name(declared.name, candidates);
-    error(declared.where, fmt::format("\"{}\" is no input of any converter{}", printable_short(declared.name),
-                                      nearest.empty() ? std::string{} : fmt::format("; did you mean \"{}\"?", printable_short(nearest))));
+    error(
+        declared.where,
+        fmt::format("\"{}\" is no input of any converter{}", printable_short(declared.name),
+                    nearest.empty() ? std::string{} : fmt::format("; did you mean \"{}\"?", printable_short(nearest))));
   }
 
   void finish(model::Input& input, const model::ConverterKeys& keys) {
@@ -117,8 +125,8 @@ class Inputs {
                                 [&](const std::string& net) {
                                   const model::NetId id = index_.net(net);
                                   if (!id.valid())
-                                    return error(end.where, fmt::format("no net \"{}\" in the netlist{}", printable_short(net),
-                                                                        index_.suggest_net(net)));
+                                    return error(end.where, fmt::format("no net \"{}\" in the netlist{}",
+                                                                        printable_short(net), index_.suggest_net(net)));
                                   bound = id;
                                   if (const Rail* rail = rails_.at(nodes_.of(id)))
                                     nominal = rail->has_volts ? rail->volts.value : rail->highest_volts;
@@ -137,8 +145,8 @@ class Inputs {
 
 }  // namespace
 
-std::vector<model::Input> bind_inputs(const model::Sheet& sheet, const Nodes& nodes, const Rails& rails, const NameIndex& index,
-                                      source::Diagnostics& diagnostics) {
+std::vector<model::Input> bind_inputs(const model::Sheet& sheet, const Nodes& nodes, const Rails& rails,
+                                      const NameIndex& index, source::Diagnostics& diagnostics) {
   return Inputs(sheet, nodes, rails, index, diagnostics).run();
 }
 

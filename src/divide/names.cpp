@@ -2,7 +2,6 @@
 
 #include <algorithm>
 #include <array>
-
 #include <fmt/format.h>
 
 #include "base/text.hpp"
@@ -19,7 +18,9 @@ Id at_name(const std::vector<Id>& of_name, const base::NameTable& names, std::st
   return id && id->index() < of_name.size() ? of_name[id->index()] : Id{};
 }
 
-bool is_glob(std::string_view text) { return text.find_first_of("*?") != std::string_view::npos; }
+bool is_glob(std::string_view text) {
+  return text.find_first_of("*?") != std::string_view::npos;
+}
 
 template <class Id, class Items, class Name>
 std::vector<Id> matching(std::string_view glob, Id exact, const Items& items, const Name& name_of) {
@@ -39,7 +40,8 @@ std::string suggestion(std::string_view wanted, const std::vector<std::string_vi
 }  // namespace
 
 bool is_ground_name(std::string_view name) {
-  return std::any_of(ground_names.begin(), ground_names.end(), [&](std::string_view known) { return base::same_name(known, name); });
+  return std::any_of(ground_names.begin(), ground_names.end(),
+                     [&](std::string_view known) { return base::same_name(known, name); });
 }
 
 NameIndex::NameIndex(const model::Circuit& circuit, const base::NameTable& names)
@@ -49,7 +51,8 @@ NameIndex::NameIndex(const model::Circuit& circuit, const base::NameTable& names
       element_of_name_(names.size()),
       instance_of_name_(names.size()) {
   // Backwards, so that the first bearer of a name is the one that is found.
-  for (auto i = static_cast<std::uint32_t>(circuit.nets.size()); i-- > 0;) net_of_name_[circuit.nets[i].name.index()] = model::NetId{i};
+  for (auto i = static_cast<std::uint32_t>(circuit.nets.size()); i-- > 0;)
+    net_of_name_[circuit.nets[i].name.index()] = model::NetId{i};
   for (auto i = static_cast<std::uint32_t>(circuit.elements.size()); i-- > 0;)
     element_of_name_[circuit.elements[i].name.index()] = model::ElementId{i};
   for (auto i = static_cast<std::uint32_t>(circuit.instances.size()); i-- > 0;)
@@ -62,11 +65,17 @@ model::NetId NameIndex::net(std::string_view name) const {
   return at_name(net_of_name_, names_, name);
 }
 
-model::ElementId NameIndex::element(std::string_view name) const { return at_name(element_of_name_, names_, name); }
-model::InstanceId NameIndex::instance(std::string_view name) const { return at_name(instance_of_name_, names_, name); }
+model::ElementId NameIndex::element(std::string_view name) const {
+  return at_name(element_of_name_, names_, name);
+}
+model::InstanceId NameIndex::instance(std::string_view name) const {
+  return at_name(instance_of_name_, names_, name);
+}
 
 std::vector<model::NetId> NameIndex::nets(std::string_view glob) const {
-  return matching(glob, net(glob), circuit_.nets, [this](model::NetId id) { return text(id); });
+  auto found = matching(glob, net(glob), circuit_.nets, [this](model::NetId id) { return text(id); });
+  if (!net(glob).valid()) std::erase(found, model::ground);
+  return found;
 }
 
 std::vector<model::ElementId> NameIndex::elements(std::string_view glob) const {
@@ -77,9 +86,15 @@ std::vector<model::InstanceId> NameIndex::instances(std::string_view glob) const
   return matching(glob, instance(glob), circuit_.instances, [this](model::InstanceId id) { return text(id); });
 }
 
-std::string_view NameIndex::text(model::NetId net) const { return net == model::ground ? "0" : names_.text(circuit_.nets[net.index()].name); }
-std::string_view NameIndex::text(model::ElementId element) const { return names_.text(circuit_.elements[element.index()].name); }
-std::string_view NameIndex::text(model::InstanceId instance) const { return names_.text(circuit_.instances[instance.index()].name); }
+std::string_view NameIndex::text(model::NetId net) const {
+  return net == model::ground ? "0" : names_.text(circuit_.nets[net.index()].name);
+}
+std::string_view NameIndex::text(model::ElementId element) const {
+  return names_.text(circuit_.elements[element.index()].name);
+}
+std::string_view NameIndex::text(model::InstanceId instance) const {
+  return names_.text(circuit_.instances[instance.index()].name);
+}
 
 std::string NameIndex::suggest_net(std::string_view wanted) const {
   std::vector<std::string_view> candidates;

@@ -24,6 +24,7 @@ class NameIndex {
   [[nodiscard]] model::InstanceId instance(std::string_view name) const;
 
   // Nets, elements, instances whose name fits a glob, in the netlist's order; an exact name wins over the glob reading.
+  // No glob means ground.
   [[nodiscard]] std::vector<model::NetId> nets(std::string_view glob) const;
   [[nodiscard]] std::vector<model::ElementId> elements(std::string_view glob) const;
   [[nodiscard]] std::vector<model::InstanceId> instances(std::string_view glob) const;

@@ -50,7 +50,8 @@ bool must_probe(const Graph& graph, const model::BoundEnd& end) {
 
 void probe_ends(const Subject& subject, const Built& built, model::ProbedNetwork& out) {
   const auto node_of = [&](const model::BoundEnd& end) {
-    return must_probe(subject.graph, end) ? built.node(subject.graph.nodes().of(std::get<model::NetId>(end))) : model::NodeId{};
+    return must_probe(subject.graph, end) ? built.node(subject.graph.nodes().of(std::get<model::NetId>(end)))
+                                          : model::NodeId{};
   };
   out.low = node_of(subject.input.low);
   out.high = node_of(subject.input.high);
@@ -62,7 +63,8 @@ void note_sensor(const Subject& subject, const Built& built, model::ProbedNetwor
   out.sensor_minus = built.node(subject.sensor->minus);
   if (subject.sensor->edges.size() != 1) return;
   const BranchId branch = built.branch(subject.sensor->edges.front());
-  if (branch.valid() && std::holds_alternative<model::Resistor>(built.network.branches[branch.index()].part)) out.sensor = branch;
+  if (branch.valid() && std::holds_alternative<model::Resistor>(built.network.branches[branch.index()].part))
+    out.sensor = branch;
 }
 
 // Each converter input on the network draws its leakage and has its input resistance.
@@ -72,9 +74,15 @@ void add_inputs(const Subject& subject, const Built& built, model::ProbedNetwork
     const model::NodeId at = built.node(node);
     if (!at.valid() || subject.graph.rails().ideal_at(node) != nullptr) continue;
     if (input.input_resistance)
-      push(out.network, {model::Resistor{{*input.input_resistance, {}}}, {at, model::ground_node}, 2, model::BranchOrigin::input_resistance, {}, {}});
+      push(out.network, {model::Resistor{{*input.input_resistance, {}}},
+                         {at, model::ground_node},
+                         2,
+                         model::BranchOrigin::input_resistance,
+                         {},
+                         {}});
     if (input.leakage == 0) continue;
-    out.leakages.push_back(push(out.network, {model::CurrentSource{}, {model::ground_node, at}, 2, model::BranchOrigin::leakage, {}, {}}));
+    out.leakages.push_back(
+        push(out.network, {model::CurrentSource{}, {model::ground_node, at}, 2, model::BranchOrigin::leakage, {}, {}}));
     out.leakage_amperes.push_back(input.leakage);
   }
 }
@@ -122,7 +130,8 @@ Plain plain_network(const Subject& subject, std::span<const Edge> edges, Node pr
   Plain plain{std::move(built.network), {}, built.node(probe)};
   const model::NodeId plus = built.node(subject.sensor->plus);
   const model::NodeId minus = built.node(subject.sensor->minus);
-  plain.sensor = push(plain.network, {model::Resistor{{1e4, {}}}, {plus, minus}, 2, model::BranchOrigin::sensor, {}, {}});
+  plain.sensor =
+      push(plain.network, {model::Resistor{{1e4, {}}}, {plus, minus}, 2, model::BranchOrigin::sensor, {}, {}});
   return plain;
 }
 
@@ -140,7 +149,8 @@ std::vector<double> sample_ohms(const Subject& subject, const model::SensorDecla
 }
 
 // Pin volts with a resistance for a sensor, at each sample; empty where some have no solution.
-std::vector<double> pin_volts(const Subject& subject, std::span<const Edge> edges, std::span<const double> ohms, double at) {
+std::vector<double> pin_volts(const Subject& subject, std::span<const Edge> edges, std::span<const double> ohms,
+                              double at) {
   Plain plain = plain_network(subject, edges, subject.graph.nodes().of(subject.input.net), false);
   std::vector<double> volts;
   if (!freeze(plain.network, subject.graph.circuit(), at)) return volts;
@@ -174,12 +184,23 @@ std::vector<Edge> without(std::span<const Edge> edges, std::span<const Edge> rem
   return left;
 }
 
+// Whether something tells a node's voltage where only these edges are left: one that nothing touches would float.
+bool is_held(const Graph& graph, std::span<const Edge> edges, Node node) {
+  const auto touches = [&](Edge edge) {
+    for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
+      if (graph.pin(edge, i) == node) return true;
+    return false;
+  };
+  return graph.rails().at(node) != nullptr || std::any_of(edges.begin(), edges.end(), touches);
+}
+
 // Whether the sensor's inside is joined to a rail that is none of its two ends: then no one resistance stands for it.
 bool has_third_end(const Subject& subject) {
   for (const Edge edge : subject.sensor->edges)
     for (std::size_t i = 0; i < subject.graph.pin_count(edge); ++i) {
       const Node node = subject.graph.pin(edge, i);
-      if (node != subject.sensor->plus && node != subject.sensor->minus && subject.graph.rails().at(node) != nullptr) return true;
+      if (node != subject.sensor->plus && node != subject.sensor->minus && subject.graph.rails().at(node) != nullptr)
+        return true;
     }
   return false;
 }
@@ -198,18 +219,20 @@ model::ProbedNetwork whole_network(const Subject& subject) {
 model::ProbedNetwork bare_network(const Subject& subject, std::span<const Edge> arms, Node tap) {
   std::vector<Node> nodes{tap};
   if (subject.sensor != nullptr) nodes.push_back(subject.sensor->plus), nodes.push_back(subject.sensor->minus);
+  const std::vector<Edge> edges = with_sensor(subject, arms);
   for (const model::BoundEnd* end : {&subject.input.low, &subject.input.high})
-    if (must_probe(subject.graph, *end)) nodes.push_back(subject.graph.nodes().of(std::get<model::NetId>(*end)));
-  Built built = build(subject.graph, with_sensor(subject, arms), nodes, true);
+    if (must_probe(subject.graph, *end) &&
+        is_held(subject.graph, edges, subject.graph.nodes().of(std::get<model::NetId>(*end))))
+      nodes.push_back(subject.graph.nodes().of(std::get<model::NetId>(*end)));
+  Built built = build(subject.graph, edges, nodes, true);
   return finish(subject, built, tap);
 }
 
 std::optional<model::OnePort> sensor_form(const Subject& subject, std::span<const Edge> arms, Node tap) {
   if (subject.sensor == nullptr || subject.sensor->is_rail || has_third_end(subject)) return std::nullopt;
   const Plain plain = plain_network(subject, arms, tap, true);
-  const bool fixed = std::none_of(plain.network.branches.begin(), plain.network.branches.end(), [](const model::Branch& branch) {
-    return expression_of(branch.part).valid();
-  });
+  const bool fixed = std::none_of(plain.network.branches.begin(), plain.network.branches.end(),
+                                  [](const model::Branch& branch) { return expression_of(branch.part).valid(); });
   if (!plain.network.linear || !fixed) return std::nullopt;
   const auto form = network::one_port(plain.network, plain.sensor, plain.probe);
   return form.ok() ? std::optional(*form) : std::nullopt;

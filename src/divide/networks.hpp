@@ -20,18 +20,20 @@ struct Subject {
   const std::vector<model::Input>& inputs;  // all of the board
   const model::Input& input;
   const Surroundings& around;
-  const SensorEdge* sensor;                 // null: nothing varies
+  const SensorEdge* sensor;  // null: nothing varies
 };
 
-// The whole network, the pin as probe: every edge of the surroundings, rails with their resistances, every input's leakage (nominally zero)
-// and input resistance.
+// The whole network, the pin as probe: every edge of the surroundings, rails with their resistances, every input's
+// leakage (nominally zero) and input resistance.
 [[nodiscard]] model::ProbedNetwork whole_network(const Subject& subject);
 
-// The arms and the sensor between ideal rails, the tap as probe.
+// The arms and the sensor between ideal rails, the tap as probe. An end of the converter's range that the arms do not
+// touch is no part of it.
 [[nodiscard]] model::ProbedNetwork bare_network(const Subject& subject, std::span<const Edge> arms, Node tap);
 
-// The one-port form of the bare divider at its tap, for a sensor of any make between its two ends. Nothing where the sensor is a
-// rail or has more than two ends, where the rest of the arms is not linear, or where it sees no finite resistance.
+// The one-port form of the bare divider at its tap, for a sensor of any make between its two ends. Nothing where the
+// sensor is a rail or has more than two ends, where the rest of the arms is not linear, or where it sees no finite
+// resistance.
 [[nodiscard]] std::optional<model::OnePort> sensor_form(const Subject& subject, std::span<const Edge> arms, Node tap);
 
 // Weighs edges of the surroundings for choose_arms(): the pin's largest movement at seven points of the sweep.

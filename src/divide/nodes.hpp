@@ -1,4 +1,5 @@
-// Nodes: nets that zero-ohm links, inductors and ferrites join at DC. Everything in this room walks over nodes, not nets.
+// Nodes: nets that zero-ohm links, inductors and ferrites join at DC. Everything in this room walks over nodes, not
+// nets.
 #pragma once
 
 #include <cstdint>

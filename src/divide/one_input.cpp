@@ -1,11 +1,10 @@
 #include "divide/one_input.hpp"
 
 #include <algorithm>
-#include <set>
-#include <unordered_set>
-
 #include <fmt/format.h>
 #include <fmt/ranges.h>
+#include <set>
+#include <unordered_set>
 
 #include "base/text.hpp"
 #include "divide/arms.hpp"
@@ -53,7 +52,8 @@ class OneInput {
 
   [[nodiscard]] bool reaches_rail() const {
     const auto reached = resistive_reach(graph_, pin_);
-    return std::any_of(reached.begin(), reached.end(), [this](Node node) { return graph_.rails().at(node) != nullptr; });
+    return std::any_of(reached.begin(), reached.end(),
+                       [this](Node node) { return graph_.rails().at(node) != nullptr; });
   }
 
   void refuse(std::string why) { found_.not_audited.push_back(std::move(why)); }
@@ -62,15 +62,17 @@ class OneInput {
     found_.unmodelled = find_touches(graph_, around_);
     for (const auto& touch : found_.unmodelled)
       if (!touch.taken_as_open)
-        refuse(fmt::format("{} on net {} has no model: declare a stand-in for it, for example [part.\"{}\"] model = \"open\"",
-                           printable_short(graph_.names().text(touch.element)), printable_short(graph_.names().text(touch.net)),
-                           printable_short(graph_.names().text(touch.element))));
+        refuse(fmt::format(
+            "{} on net {} has no model: declare a stand-in for it, for example [part.\"{}\"] model = \"open\"",
+            printable_short(graph_.names().text(touch.element)), printable_short(graph_.names().text(touch.net)),
+            printable_short(graph_.names().text(touch.element))));
     if (const model::CardId card = request_.broken.touching(graph_, around_, request_.netlist); card.valid()) {
       const source::Place place = request_.netlist.span(card).begin;
       refuse(fmt::format("a card that could not be read names a net of its network ({}:{})",
                          printable_short(request_.sources[place.source].name), request_.sources.position(place).line));
     }
-    if (around_.measures_rail_current) refuse("a source in its network follows the current of a source that makes a rail");
+    if (around_.measures_rail_current)
+      refuse("a source in its network follows the current of a source that makes a rail");
     for (const Node node : around_.rails)
       if (const Rail* rail = graph_.rails().at(node); !rail->conflict.empty()) refuse(rail->conflict);
     std::unordered_set<std::uint32_t> here;
@@ -85,7 +87,7 @@ class OneInput {
     std::vector<std::size_t> walked;
     for (const std::size_t sensor : sensors) {
       auto edge = sensor_edge(graph_, around_, sensor);
-      if (!edge) continue;
+      if (!edge || (!edge->is_rail && edge->plus == edge->minus)) continue;  // a shorted one moves nothing
       auto walk = find_walk(graph_, *edge, pin_);
       if (!walk) continue;
       walked.push_back(sensor);
@@ -107,17 +109,22 @@ class OneInput {
     return true;
   }
 
-  // A swept rail behind a divider's load, or one with a voltage at rest above the sensor's arm, gives way to a resistance.
+  // A swept rail behind a divider's load, or one with a voltage at rest above the sensor's arm, gives way to a
+  // resistance.
   void prefer_resistance(std::vector<std::size_t>& walked) {
-    const auto is_rail = [this](std::size_t sensor) { return graph_.board().sensors[sensor].kind->moves == sensor::Moves::rail; };
-    if (walked.size() < 2 || std::count_if(walked.begin(), walked.end(), is_rail) + 1 != static_cast<std::ptrdiff_t>(walked.size())) return;
+    const auto is_rail = [this](std::size_t sensor) {
+      return graph_.board().sensors[sensor].kind->moves == sensor::Moves::rail;
+    };
+    if (walked.size() < 2 ||
+        std::count_if(walked.begin(), walked.end(), is_rail) + 1 != static_cast<std::ptrdiff_t>(walked.size()))
+      return;
     const auto resistance = std::find_if_not(walked.begin(), walked.end(), is_rail);
     edge_ = sensor_edge(graph_, around_, *resistance);
     walk_ = find_walk(graph_, *edge_, pin_);
     const Arms arms = arms_of_walk();
     const Sides sides = sort_sides(graph_, *edge_, *walk_, arms);
     for (const Rail* rail : {sides.upper_rail, sides.lower_rail})
-      if (rail != nullptr && rail->sensor) return;
+      if (rail != nullptr && rail->sensor && !rail->has_volts) return;
     walked = {*resistance};
   }
 
@@ -140,7 +147,8 @@ class OneInput {
     // Weighing takes solves: only where there is a choice.
     std::size_t candidates = 0;
     for (const auto& off : walk_->off)
-      candidates += std::any_of(off.begin(), off.end(), [](const OffWalk& branch) { return branch.reaches_rail; }) ? 1U : 0U;
+      candidates +=
+          std::any_of(off.begin(), off.end(), [](const OffWalk& branch) { return branch.reaches_rail; }) ? 1U : 0U;
     const Weigh weigh = candidates > 1 ? weigher(subject(), declaration()) : [](std::span<const Edge>) { return 0.0; };
     return choose_arms(graph_, *walk_, ambiguous_share(), weigh);
   }
@@ -152,9 +160,9 @@ class OneInput {
       return std::holds_alternative<model::CurrentSource>(graph_.part(edge));
     });
     if (!edge_->is_rail && !fed_by_current && sides.upper_rail == sides.lower_rail) {
-      found_.no_divider = sides.upper_rail == nullptr
-                              ? std::string("its arms lead to no rail")
-                              : fmt::format("both its arms lead to one rail, {}", printable_short(sides.upper_rail->name));
+      found_.no_divider = sides.upper_rail == nullptr ? std::string("its arms lead to no rail")
+                                                      : fmt::format("both its arms lead to one rail, {}",
+                                                                    printable_short(sides.upper_rail->name));
       found_.sensor.reset();
       return;
     }
@@ -172,8 +180,10 @@ class OneInput {
 
   void name_parts(const Sides& sides) {
     found_.sensor_arm = sides.sensor_arm;
-    if (sides.upper_rail != nullptr && (sides.upper_rail != sides.lower_rail || sides.upper_rail->highest_volts > 0)) found_.upper_rail = sides.upper_rail->name;
-    if (sides.lower_rail != nullptr && (sides.upper_rail != sides.lower_rail || found_.upper_rail.empty())) found_.lower_rail = sides.lower_rail->name;
+    if (sides.upper_rail != nullptr && (sides.upper_rail != sides.lower_rail || sides.upper_rail->highest_volts > 0))
+      found_.upper_rail = sides.upper_rail->name;
+    if (sides.lower_rail != nullptr && (sides.upper_rail != sides.lower_rail || found_.upper_rail.empty()))
+      found_.lower_rail = sides.lower_rail->name;
     found_.upper = list(sides.upper, sides.sensor_arm == model::Arm::upper);
     found_.lower = list(sides.lower, sides.sensor_arm == model::Arm::lower);
     found_.sense = list(with_shorts(arms_->sense), false);
@@ -236,7 +246,8 @@ class OneInput {
       const Rail* rail = graph_.rails().at(node);
       const bool moved = edge_->is_rail && node == edge_->plus;
       if (rail->has_volts || moved) continue;
-      refuse(fmt::format("rail {} has no voltage: declare [rail.\"{}\"] volts", printable_short(rail->name), printable_short(rail->name)));
+      refuse(fmt::format("rail {} has no voltage: declare [rail.\"{}\"] volts", printable_short(rail->name),
+                         printable_short(rail->name)));
       return false;
     }
     for (const auto& branch : found_.whole.network.branches) {
@@ -244,7 +255,8 @@ class OneInput {
       const auto& bound = graph_.board().sensors[edge_->sensor];
       for (const auto& swept : graph_.circuit().swept)
         if (swept.found && bound.variable != swept.variable && depends_on(graph_, tree, swept.variable)) {
-          refuse(fmt::format("it also depends on the parameter of sensor {}; this version sweeps one", printable_short(swept.sensor)));
+          refuse(fmt::format("it also depends on the parameter of sensor {}; this version sweeps one",
+                             printable_short(swept.sensor)));
           return false;
         }
     }
@@ -263,6 +275,8 @@ class OneInput {
 
 }  // namespace
 
-model::Divider divide_input(const InputRequest& request, const model::Input& input) { return OneInput(request, input).run(); }
+model::Divider divide_input(const InputRequest& request, const model::Input& input) {
+  return OneInput(request, input).run();
+}
 
 }  // namespace divide

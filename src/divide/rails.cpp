@@ -2,7 +2,6 @@
 
 #include <algorithm>
 #include <cmath>
-
 #include <fmt/format.h>
 
 #include "base/text.hpp"
@@ -14,8 +13,8 @@ using base::printable_short;
 
 class Finder {
  public:
-  Finder(const model::Circuit& circuit, const model::Sheet& sheet, const Board& board, const Nodes& nodes, const NameIndex& index,
-         source::Diagnostics& diagnostics)
+  Finder(const model::Circuit& circuit, const model::Sheet& sheet, const Board& board, const Nodes& nodes,
+         const NameIndex& index, source::Diagnostics& diagnostics)
       : circuit_(circuit), sheet_(sheet), board_(board), nodes_(nodes), index_(index), diagnostics_(diagnostics) {
     found_.of.resize(nodes.size());
     found_.spent.resize(circuit.elements.size());
@@ -43,13 +42,16 @@ class Finder {
     return rail;
   }
 
-  void error(source::Span where, std::string message) { diagnostics_.push_back({base::Level::error, where, std::move(message)}); }
+  void error(source::Span where, std::string message) {
+    diagnostics_.push_back({base::Level::error, where, std::move(message)});
+  }
 
   // The node of a declared rail, or nothing after an error.
   std::optional<Node> node_of(const std::string& name, source::Span where) {
     const model::NetId net = index_.net(name);
     if (net.valid()) return nodes_.of(net);
-    error(where, fmt::format("rail \"{}\" is no net of the netlist{}", printable_short(name), index_.suggest_net(name)));
+    error(where,
+          fmt::format("rail \"{}\" is no net of the netlist{}", printable_short(name), index_.suggest_net(name)));
     return std::nullopt;
   }
 
@@ -57,7 +59,9 @@ class Finder {
     const auto node = node_of(declared.net, declared.where);
     if (!node) return;
     if (const Rail* other = found_.at(*node)) {
-      if (declared.volts && other->has_volts && declared.volts->value == other->volts.value && declared.ohms == std::nullopt) return;
+      if (declared.volts && other->has_volts && declared.volts->value == other->volts.value &&
+          declared.ohms == std::nullopt)
+        return;
       return error(declared.where, fmt::format("rail \"{}\" is joined to rail \"{}\" by shorts: declare one of them",
                                                printable_short(declared.net), printable_short(other->name)));
     }
@@ -74,7 +78,8 @@ class Finder {
     if (!node) return;
     if (*node == nodes_.of(model::ground)) return error(declared.where, "ground cannot be swept");
     const bool known = found_.of[*node].has_value();
-    Rail& rail = known ? found_.rails[*found_.of[*node]] : add(*node, std::string(index_.text(index_.net(declared.name))));
+    Rail& rail =
+        known ? found_.rails[*found_.of[*node]] : add(*node, std::string(index_.text(index_.net(declared.name))));
     if (!known) rail.has_volts = false;
     rail.sensor = sensor;
     const double from = declared.from ? declared.from->value : 0;
@@ -86,7 +91,8 @@ class Finder {
   void follow_sources() {
     std::vector<std::size_t> open;
     for (std::size_t i = 0; i < circuit_.elements.size(); ++i)
-      if (!board_.removed[i] && std::holds_alternative<model::VoltageSource>(circuit_.elements[i].part)) open.push_back(i);
+      if (!board_.removed[i] && std::holds_alternative<model::VoltageSource>(circuit_.elements[i].part))
+        open.push_back(i);
     for (bool changed = true; changed;) {
       changed = false;
       const auto done = std::remove_if(open.begin(), open.end(), [&](std::size_t i) { return follow(i, changed); });
@@ -113,13 +119,17 @@ class Finder {
     if (!base.has_volts || base.sensor || base.ohms != 0 || !base.volts.fixed()) return false;
     if (!volts.fixed() && (base.volts.value != 0 || plus_known)) return false;
     Rail& rail = add(next, std::string(index_.text(first_net(next))));
-    rail.volts = volts.fixed() ? model::Number{base.volts.value + (plus_known ? -volts.value : volts.value), {}} : volts;
+    rail.volts =
+        volts.fixed() ? model::Number{base.volts.value + (plus_known ? -volts.value : volts.value), {}} : volts;
     found_.spent[i] = 1;
     changed = true;
     return true;
   }
 
   [[nodiscard]] model::NetId first_net(Node node) const { return nodes_.nets(node).front(); }
+
+  // Volts that are sums of the netlist's numbers agree but for the last bits.
+  static bool agree(double a, double b) { return std::fabs(a - b) <= 1e-9 * std::max(std::fabs(a), std::fabs(b)); }
 
   // A source between two rails: a declaration overrides it; two sources that disagree are a conflict.
   void meet(std::size_t i, const model::Number& volts, Node plus, Node minus) {
@@ -133,13 +143,16 @@ class Finder {
       return;
     }
     const bool from_declaration = *found_.of[plus] < declared_ && *found_.of[minus] < declared_;
-    const bool one_declared = (*found_.of[plus] != 0 && *found_.of[plus] < declared_) || (*found_.of[minus] != 0 && *found_.of[minus] < declared_);
+    const bool one_declared = (*found_.of[plus] != 0 && *found_.of[plus] < declared_) ||
+                              (*found_.of[minus] != 0 && *found_.of[minus] < declared_);
     if (from_declaration && one_declared) return;
-    const double held = upper.volts.value - lower.volts.value;
-    if (volts.fixed() && upper.volts.fixed() && lower.volts.fixed() && held == volts.value && plus != minus) return;
+    if (volts.fixed() && upper.volts.fixed() && lower.volts.fixed() &&
+        agree(upper.volts.value, lower.volts.value + volts.value))
+      return;
     Rail& blamed = plus == 0 ? lower : upper;
     blamed.conflict = fmt::format("{} and another source hold {} at different voltages",
-                                  printable_short(index_.text(model::ElementId{static_cast<std::uint32_t>(i)})), printable_short(blamed.name));
+                                  printable_short(index_.text(model::ElementId{static_cast<std::uint32_t>(i)})),
+                                  printable_short(blamed.name));
   }
 
   const model::Circuit& circuit_;
@@ -159,8 +172,8 @@ const Rail* Rails::ideal_at(Node node) const {
   return rail != nullptr && rail->ohms == 0 ? rail : nullptr;
 }
 
-Rails find_rails(const model::Circuit& circuit, const model::Sheet& sheet, const Board& board, const Nodes& nodes, const NameIndex& index,
-                 source::Diagnostics& diagnostics) {
+Rails find_rails(const model::Circuit& circuit, const model::Sheet& sheet, const Board& board, const Nodes& nodes,
+                 const NameIndex& index, source::Diagnostics& diagnostics) {
   return Finder(circuit, sheet, board, nodes, index, diagnostics).run();
 }
 

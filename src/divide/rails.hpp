@@ -25,9 +25,9 @@ struct Rail {
 };
 
 struct Rails {
-  std::vector<Rail> rails;                        // [0] is ground
-  std::vector<std::optional<std::size_t>> of;     // one a node
-  std::vector<char> spent;                        // one an element: a source that makes a rail, no branch of any network
+  std::vector<Rail> rails;                     // [0] is ground
+  std::vector<std::optional<std::size_t>> of;  // one a node
+  std::vector<char> spent;                     // one an element: a source that makes a rail, no branch of any network
 
   // The rail that holds a node ideally: networks are cut there. Null for other nodes and for rails behind ohms.
   [[nodiscard]] const Rail* ideal_at(Node node) const;
@@ -35,7 +35,7 @@ struct Rails {
 };
 
 // Declared rails win over sources of the netlist. Errors: an unknown net, one node declared as two rails.
-[[nodiscard]] Rails find_rails(const model::Circuit& circuit, const model::Sheet& sheet, const Board& board, const Nodes& nodes,
-                               const NameIndex& index, source::Diagnostics& diagnostics);
+[[nodiscard]] Rails find_rails(const model::Circuit& circuit, const model::Sheet& sheet, const Board& board,
+                               const Nodes& nodes, const NameIndex& index, source::Diagnostics& diagnostics);
 
 }  // namespace divide

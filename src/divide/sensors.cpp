@@ -39,7 +39,8 @@ bool parameter_is_here(const Graph& graph, const Surroundings& around, const Bou
     const auto own = edges_of(graph, around, bound.instance);
     return std::any_of(own.begin(), own.end(), moves);
   }
-  return std::binary_search(around.edges.begin(), around.edges.end(), bound.element.value) && moves(bound.element.value);
+  return std::binary_search(around.edges.begin(), around.edges.end(), bound.element.value) &&
+         moves(bound.element.value);
 }
 
 std::optional<SensorEdge> parameter_edge(const Graph& graph, const Surroundings& around, std::size_t sensor) {
@@ -52,7 +53,8 @@ std::optional<SensorEdge> parameter_edge(const Graph& graph, const Surroundings&
     return edge;
   }
   // The element itself, or of an instance with other than two ends its first resistance that depends on the parameter.
-  for (const Edge candidate : bound.instance.valid() ? edges_of(graph, around, bound.instance) : std::vector<Edge>{bound.element.value}) {
+  for (const Edge candidate :
+       bound.instance.valid() ? edges_of(graph, around, bound.instance) : std::vector<Edge>{bound.element.value}) {
     if (!graph.is_way(candidate) || !depends_on(graph, expression_of(graph.part(candidate)), *bound.variable)) continue;
     edge.plus = graph.pin(candidate, 0);
     edge.minus = graph.pin(candidate, 1);

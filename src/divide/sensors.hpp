@@ -11,8 +11,8 @@
 
 namespace divide {
 
-// The sensors of the sheet that are part of these surroundings: those of resistances by their edges, those of parameters by what
-// depends on them, those of rails by a resistive way to the rail from the input's node.
+// The sensors of the sheet that are part of these surroundings: those of resistances by their edges, those of
+// parameters by what depends on them, those of rails by a resistive way to the rail from the input's node.
 [[nodiscard]] std::vector<std::size_t> sensors_in(const Graph& graph, const Surroundings& around, Node pin);
 
 // A sensor as one edge. Nothing where it has no two ends (a parameter that moves no resistance here).

@@ -7,8 +7,8 @@
 namespace divide {
 namespace {
 
-// Sorts edges into the upper and the lower arm. Taken apart at the tap and at the rails, the arms fall into pieces; a piece
-// that leads to one rail is on that rail's side.
+// Sorts edges into the upper and the lower arm. Taken apart at the tap and at the rails, the arms fall into pieces; a
+// piece that leads to one rail is on that rail's side.
 class Sorter {
  public:
   Sorter(const Graph& graph, const SensorEdge& sensor, const Walk& walk, const Arms& arms)
@@ -26,14 +26,17 @@ class Sorter {
     else
       sides_.sensor_arm = side_of_rail(sensor_.plus);
     for (const Edge edge : arms_.edges) {
-      const model::Arm arm = is_source(edge) ? side_of_source(edge) : side_of(graph_.pin(edge, 0), graph_.pin(edge, 1), *sides_.sensor_arm);
+      const model::Arm arm = is_source(edge) ? side_of_source(edge)
+                                             : side_of(graph_.pin(edge, 0), graph_.pin(edge, 1), *sides_.sensor_arm);
       (arm == model::Arm::upper ? sides_.upper : sides_.lower).push_back(edge);
     }
     return std::move(sides_);
   }
 
  private:
-  [[nodiscard]] bool is_source(Edge edge) const { return std::holds_alternative<model::CurrentSource>(graph_.part(edge)); }
+  [[nodiscard]] bool is_source(Edge edge) const {
+    return std::holds_alternative<model::CurrentSource>(graph_.part(edge));
+  }
   [[nodiscard]] bool bounds(Node node) const { return node == tap_ || graph_.rails().at(node) != nullptr; }
 
   Node find(Node node) {

@@ -2,9 +2,8 @@
 
 #include <algorithm>
 #include <cmath>
-#include <utility>
-
 #include <fmt/format.h>
+#include <utility>
 
 #include "base/overloaded.hpp"
 #include "base/text.hpp"
@@ -23,13 +22,15 @@ base::Result<std::vector<double>> ohms_of(const model::SensorDeclaration& sensor
   for (const double x : at) {
     const double value = law->ohms(x);
     if (!std::isfinite(value) || value <= 0)
-      return base::Error{fmt::format("{} has no resistance above zero at {}", base::printable_short(sensor.name), base::number_text(x))};
+      return base::Error{fmt::format("{} has no resistance above zero at {}", base::printable_short(sensor.name),
+                                     base::number_text(x))};
     ohms.push_back(value);
   }
   return ohms;
 }
 
-base::Result<std::vector<double>> expression_values(const model::Branch& branch, const model::Circuit& circuit, std::span<const double> at) {
+base::Result<std::vector<double>> expression_values(const model::Branch& branch, const model::Circuit& circuit,
+                                                    std::span<const double> at) {
   const model::ExpressionId tree = expression_of(branch.part);
   const bool resistance = std::holds_alternative<model::Resistor>(branch.part);
   double x = 0;
@@ -41,10 +42,12 @@ base::Result<std::vector<double>> expression_values(const model::Branch& branch,
     x = measurand;
     const auto value = expression::evaluate(circuit.expressions, tree, leaves);
     if (const auto* trouble = std::get_if<expression::Trouble>(&value))
-      return base::Error{fmt::format("its expression has no value at {}: {}", base::number_text(measurand), trouble->message)};
+      return base::Error{
+          fmt::format("its expression has no value at {}: {}", base::number_text(measurand), trouble->message)};
     const double number = std::get<double>(value);
     if (resistance && number <= 0)
-      return base::Error{fmt::format("its resistance is {} at {}", base::si_text(number, "ohm"), base::number_text(measurand))};
+      return base::Error{
+          fmt::format("its resistance is {} at {}", base::si_text(number, "ohm"), base::number_text(measurand))};
     values.push_back(number);
   }
   return values;
@@ -56,19 +59,21 @@ base::Result<model::SweptValues> values_of(const model::SweptBranch& swept, cons
   const model::Branch& branch = probed.network.branches[swept.branch.index()];
   model::SweptValues out{swept.branch, std::holds_alternative<model::Behavioural>(branch.part), {at.begin(), at.end()}};
   if (swept.quantity == model::SweptQuantity::volts || out.is_variable) return out;
-  auto values = swept.quantity == model::SweptQuantity::ohms ? ohms_of(sensor, at) : expression_values(branch, circuit, at);
+  auto values =
+      swept.quantity == model::SweptQuantity::ohms ? ohms_of(sensor, at) : expression_values(branch, circuit, at);
   if (!values.ok()) return base::Error{values.error()};
   out.values = std::move(values).value();
   return out;
 }
 
 model::Number* number_of(model::Part& part) {
-  return std::visit(base::overloaded{[](model::Resistor& r) { return &r.ohms; }, [](model::VoltageSource& v) { return &v.volts; },
-                                     [](model::CurrentSource& i) { return &i.amperes; },
-                                     [](model::VoltageControlled& e) { return &e.gain; },
-                                     [](model::CurrentControlled& f) { return &f.gain; },
-                                     [](auto&) { return static_cast<model::Number*>(nullptr); }},
-                    part);
+  return std::visit(
+      base::overloaded{[](model::Resistor& r) { return &r.ohms; }, [](model::VoltageSource& v) { return &v.volts; },
+                       [](model::CurrentSource& i) { return &i.amperes; },
+                       [](model::VoltageControlled& e) { return &e.gain; },
+                       [](model::CurrentControlled& f) { return &f.gain; },
+                       [](auto&) { return static_cast<model::Number*>(nullptr); }},
+      part);
 }
 
 }  // namespace
@@ -85,11 +90,14 @@ bool freeze(model::Network& network, const model::Circuit& circuit, double at) {
 }
 
 base::Result<std::vector<double>> measurands(const model::SensorDeclaration& sensor, std::size_t points) {
-  return sensor::sweep_points(sensor.from ? sensor.from->value : 0, sensor.to ? sensor.to->value : 0, points, sensor::spacing_of(sensor));
+  return sensor::sweep_points(sensor.from ? sensor.from->value : 0, sensor.to ? sensor.to->value : 0, points,
+                              sensor::spacing_of(sensor));
 }
 
-base::Result<std::vector<model::SweptValues>> swept_values(const model::ProbedNetwork& probed, const model::Circuit& circuit,
-                                                           const model::SensorDeclaration& sensor, std::span<const double> at) {
+base::Result<std::vector<model::SweptValues>> swept_values(const model::ProbedNetwork& probed,
+                                                           const model::Circuit& circuit,
+                                                           const model::SensorDeclaration& sensor,
+                                                           std::span<const double> at) {
   std::vector<model::SweptValues> all;
   for (const model::SweptBranch& swept : probed.swept) {
     auto values = values_of(swept, probed, circuit, sensor, at);

@@ -14,7 +14,9 @@ std::string_view last_component(std::string_view name) {
   return dot == std::string_view::npos ? name : name.substr(dot + 1);
 }
 
-bool is_letter(char c) { return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z'); }
+bool is_letter(char c) {
+  return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
+}
 
 constexpr std::string_view word_ends = " \t\r\n(),='\"{}+-*/";
 
@@ -58,7 +60,8 @@ std::vector<model::UnmodelledTouch> find_touches(const Graph& graph, const Surro
   return touches;
 }
 
-BrokenCards::BrokenCards(const model::Netlist& netlist, const source::Sources& sources, const base::NameTable& names) : names_(names) {
+BrokenCards::BrokenCards(const model::Netlist& netlist, const source::Sources& sources, const base::NameTable& names)
+    : names_(names) {
   for (std::uint32_t i = 0; i < netlist.cards.size(); ++i) {
     if (netlist.cards[i].fate != model::CardFate::error) continue;
     Card card{model::CardId{i}, {}};
@@ -70,7 +73,8 @@ BrokenCards::BrokenCards(const model::Netlist& netlist, const source::Sources& s
   }
 }
 
-model::CardId BrokenCards::touching(const Graph& graph, const Surroundings& around, const model::Netlist& netlist) const {
+model::CardId BrokenCards::touching(const Graph& graph, const Surroundings& around,
+                                    const model::Netlist& netlist) const {
   if (cards_.empty()) return {};
   std::unordered_set<std::string> wanted;
   const std::unordered_set<Node> nodes(around.nodes.begin(), around.nodes.end());
@@ -87,7 +91,9 @@ model::CardId BrokenCards::touching(const Graph& graph, const Surroundings& arou
           wanted.insert(base::folded(names_.text(netlist.words[scope.ports.first + i].name)));
     }
   for (const Card& card : cards_)
-    if (std::any_of(card.words.begin(), card.words.end(), [&](const std::string& word) { return wanted.contains(word); })) return card.id;
+    if (std::any_of(card.words.begin(), card.words.end(),
+                    [&](const std::string& word) { return wanted.contains(word); }))
+      return card.id;
   return {};
 }
 

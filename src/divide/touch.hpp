@@ -27,9 +27,10 @@ class BrokenCards {
  public:
   BrokenCards(const model::Netlist& netlist, const source::Sources& sources, const base::NameTable& names);
 
-  // The first card that names a net of the network: the net by its own name, by its name inside its subcircuit, or by the
-  // port of an instance that is joined to it. None: an invalid id.
-  [[nodiscard]] model::CardId touching(const Graph& graph, const Surroundings& around, const model::Netlist& netlist) const;
+  // The first card that names a net of the network: the net by its own name, by its name inside its subcircuit, or by
+  // the port of an instance that is joined to it. None: an invalid id.
+  [[nodiscard]] model::CardId touching(const Graph& graph, const Surroundings& around,
+                                       const model::Netlist& netlist) const;
 
   [[nodiscard]] bool empty() const { return cards_.empty(); }
 

@@ -100,7 +100,8 @@ class Walker {
     if (graph_.rails().ideal_at(node) != nullptr) return found;
     for (const Edge edge : graph_.edges_at(node)) {
       if (!graph_.feeds(edge) || own_.contains(edge) || walk_edges_.contains(edge)) continue;
-      const bool listed = std::any_of(found.begin(), found.end(), [edge](const OffWalk& off) { return off.edge == edge; });
+      const bool listed =
+          std::any_of(found.begin(), found.end(), [edge](const OffWalk& off) { return off.edge == edge; });
       if (!listed) found.push_back(explore(edge, node));
     }
     return found;
@@ -148,7 +149,9 @@ class Walker {
 
 }  // namespace
 
-std::optional<Walk> find_walk(const Graph& graph, const SensorEdge& sensor, Node pin) { return Walker(graph, sensor, pin).run(); }
+std::optional<Walk> find_walk(const Graph& graph, const SensorEdge& sensor, Node pin) {
+  return Walker(graph, sensor, pin).run();
+}
 
 std::vector<Node> resistive_reach(const Graph& graph, Node start) {
   std::vector<Node> reached{start};

@@ -12,28 +12,28 @@ namespace divide {
 
 // The sensor as the walk sees it: one edge between two nodes, however many elements it is made of.
 struct SensorEdge {
-  std::size_t sensor = 0;         // in Board::sensors
-  bool is_rail = false;           // a swept rail: then `plus` is its node and the walk starts there
+  std::size_t sensor = 0;  // in Board::sensors
+  bool is_rail = false;    // a swept rail: then `plus` is its node and the walk starts there
   Node plus = 0;
   Node minus = 0;
-  std::vector<Edge> edges;        // that belong to the sensor: no walk passes them
+  std::vector<Edge> edges;  // that belong to the sensor: no walk passes them
 };
 
 // An edge off the walk at one of its nodes, with all that lies behind it.
 struct OffWalk {
   Edge edge = 0;
-  std::vector<Edge> region;       // `edge` included
+  std::vector<Edge> region;  // `edge` included
   bool reaches_rail = false;
   bool reaches_sensor_far_end = false;  // parallel to the sensor
-  std::vector<Node> returns;      // other nodes of the walk that it comes back to
+  std::vector<Node> returns;            // other nodes of the walk that it comes back to
 };
 
 struct Walk {
-  std::vector<Node> nodes;                    // from the sensor's end to the pin
-  std::vector<std::vector<Edge>> steps;       // the edges between nodes[i] and nodes[i+1]; parallel ones together
-  std::vector<std::vector<OffWalk>> off;      // one list a node
-  std::optional<Node> far_end;                // the sensor's other end, where it is no rail and not on the walk
-  std::vector<Edge> behind_sensor;            // all that the far end leads to
+  std::vector<Node> nodes;                // from the sensor's end to the pin
+  std::vector<std::vector<Edge>> steps;   // the edges between nodes[i] and nodes[i+1]; parallel ones together
+  std::vector<std::vector<OffWalk>> off;  // one list a node
+  std::optional<Node> far_end;            // the sensor's other end, where it is no rail and not on the walk
+  std::vector<Edge> behind_sensor;        // all that the far end leads to
 };
 
 // The shortest walk from either end of the sensor to the pin's node; nothing where there is none.

@@ -1,0 +1,78 @@
+// What a reviewer wants beside the curve: ceilings, a better resistor, source resistance, the largest load.
+#include <cmath>
+
+#include <catch2/catch.hpp>
+
+#include "tests/audit/board.hpp"
+
+using test::Board;
+using test::converter;
+using test::input;
+using test::ntc;
+
+namespace {
+
+// The sensor RS of 1 to 9 kohm, a declared number in steps of 4 kohm.
+const std::string sensor = "[sensor.RS]\nkind = \"parameter\"\nsweep = \"X\"\nfrom = 1000\nto = 9000\n";
+
+model::Figures figures(const std::string& netlist, const std::string& declarations) {
+  const Board board("title\n.param X=1k\n" + netlist, declarations);
+  const auto run = board.audit();
+  const auto& audited = input(run, "A");
+  INFO(run.diagnostics);
+  REQUIRE(audited.audited);
+  return audited.figures;
+}
+
+}  // namespace
+
+TEST_CASE("the best span is that of the geometric mean, and the resistor that reaches it is named") {
+  // k = 9: (3 - 1)/(3 + 1) = 1/2 at sqrt(1k 9k) = 3 kohm (computed from the swing of a divider, (sqrt k - 1)/(sqrt k +
+  // 1)).
+  const auto found = figures("V1 VCC 0 3.3\nR1 VCC A 1k\nRS A 0 {X}\n", converter("\"A\"") + sensor);
+  CHECK(found.span_best.value_or(0) == Approx(0.5).epsilon(1e-9));
+  CHECK(found.span_reachable.value_or(0) == Approx(0.5).epsilon(1e-4));
+  CHECK(found.best_part == "R1");
+  CHECK(found.best_ohms == Approx(3000).epsilon(0.05));
+}
+
+TEST_CASE("a monitored rail can use no more of the range than it swings") {
+  const auto found = figures("V1 VCC 0 3.3\nR1 BATT A 30k\nR2 A 0 10k\n",
+                             converter("\"A\"") + "[sensor.BATT]\nkind = \"voltage\"\nfrom = 3\nto = 12\n");
+  CHECK(found.span_best.value_or(0) == Approx(0.75).epsilon(1e-12));
+}
+
+TEST_CASE("the source resistance at the pin is the largest of the sweep, sense path included") {
+  // 9 kohm parallel to 1 kohm is 900 ohm, and 100 ohm of the sense path behind it (Thevenin).
+  const auto found = figures("V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\n", converter("\"A\"") + sensor);
+  CHECK(found.pin_source_ohms.value_or(0) == Approx(1000).epsilon(1e-9));
+}
+
+TEST_CASE("what loads the divider most is named") {
+  const std::string board = "V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\n";
+  CHECK(figures(board + "R3 A 0 100k\n", converter("\"A\"") + "input_resistance = \"10M\"\n" + sensor).largest_load ==
+        "R3");
+  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + "input_resistance = \"100k\"\n" + sensor).largest_load ==
+        "the input resistance");
+  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + "leakage = \"100uA\"\n" + sensor).largest_load ==
+        "leakage");
+  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + sensor + "[rail.VCC]\nvolts = 3.3\nohms = 50\n")
+            .largest_load == "the source resistance of a rail");
+}
+
+TEST_CASE("clamps are named together where they load the divider most") {
+  const std::string clamped =
+      "V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\nR3 A 0 10MEG\nD1 A 0 DZ\nD2 A 0 DZ\n.model DZ D(IS=1e-12)\n";
+  CHECK(figures(clamped, converter("\"A\"") + sensor).largest_load == "D1, D2");
+}
+
+TEST_CASE("a divider that nothing loads names no load") {
+  CHECK(figures("V1 VCC 0 3.3\nR1 VCC A 1k\nRS A 0 {X}\n", converter("\"A\"") + sensor).largest_load.empty());
+}
+
+TEST_CASE("a stand-in of a resistor is named as load like any part") {
+  CHECK(figures("V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\nXU3 A 0 CHIP\n"
+                "",
+                converter("\"A\"") + sensor + "[part.XU3]\nmodel = \"resistor\"\nohms = \"20k\"\nrole = \"load\"\n")
+            .largest_load == "XU3");
+}
