@@ -5,8 +5,6 @@
 #include <numeric>
 #include <string>
 
-#include "base/pages.hpp"
-
 namespace base {
 namespace {
 
@@ -14,29 +12,74 @@ constexpr char fold(char c) {
   return c >= 'A' && c <= 'Z' ? static_cast<char>(c + ('a' - 'A')) : c;
 }
 
-// FNV-1a over the folded bytes but the last, well mixed; the last byte fills the low bits. So R1230 to R1239, which
-// netlists name one after the other, lie in one cache line of the table.
+// Up to eight bytes of a text as one number: equal texts of one length give the same number, others another one.
+std::uint64_t word_of(const char* text, std::size_t size) {
+  std::uint64_t word = 0;
+  if (size >= 8) {
+    std::memcpy(&word, text, 8);
+  } else if (size >= 4) {
+    std::uint32_t low = 0;
+    std::uint32_t high = 0;
+    std::memcpy(&low, text, 4);
+    std::memcpy(&high, text + size - 4, 4);
+    word = low | std::uint64_t{high} << 32U;
+  } else if (size > 0) {
+    const auto byte = [text](std::size_t at) { return std::uint64_t{static_cast<unsigned char>(text[at])}; };
+    word = byte(0) | byte(size / 2) << 8U | byte(size - 1) << 16U;
+  }
+  return word;
+}
+
+// The same with ASCII capitals folded, all eight bytes at once.
+constexpr std::uint64_t fold_word(std::uint64_t word) {
+  constexpr std::uint64_t each = 0x0101010101010101U;
+  const std::uint64_t low = word & (each * 0x7fU);
+  const std::uint64_t from_a = low + each * (0x80U - 'A');    // its high bits: at least A
+  const std::uint64_t behind_z = low + each * (0x7fU - 'Z');  // beyond Z
+  const std::uint64_t capitals = (from_a ^ behind_z) & ~word & (each * 0x80U);
+  return word | capitals >> 2U;
+}
+
+// Calls `see` with the folded words of a text, the last of which may overlap the one before.
+template <class See>
+void for_each_word(std::string_view text, const See& see) {
+  std::size_t at = 0;
+  for (; at + 8 < text.size(); at += 8) see(fold_word(word_of(text.data() + at, 8)));
+  const std::size_t last = text.size() <= 8 ? 0 : text.size() - 8;
+  see(fold_word(word_of(text.data() + last, text.size() - last)));
+}
+
+// Over the folded bytes but the last, well mixed (multiplication and fold, the finalizer of splitmix64); the last byte
+// fills the low bits. So R1230 to R1239, which netlists name one after the other, lie in one cache line of the table.
 std::uint32_t hash_of(std::string_view text) {
   constexpr std::uint32_t line_bits = 3;
   if (text.empty()) return 0;
-  std::uint32_t hash = 2166136261U;
-  for (const char c : text.substr(0, text.size() - 1)) hash = (hash ^ static_cast<unsigned char>(fold(c))) * 16777619U;
-  hash ^= hash >> 15;
-  hash *= 0x2c1b3c6dU;
-  hash ^= hash >> 13;
+  std::uint64_t hash = text.size() * 0x9e3779b97f4a7c15U;
+  for_each_word(text.substr(0, text.size() - 1), [&hash](std::uint64_t word) {
+    hash = (hash ^ word) * 0xbf58476d1ce4e5b9U;
+    hash ^= hash >> 32U;
+  });
+  hash *= 0x94d049bb133111ebU;
+  hash ^= hash >> 31U;
   const auto last = static_cast<std::uint32_t>(static_cast<unsigned char>(fold(text.back())));
-  return (hash << line_bits) ^ last;
+  return (static_cast<std::uint32_t>(hash) << line_bits) ^ last;
 }
 
 // Blocks grow with what is kept, so that a large table lies in large pages and a small one stays small.
 constexpr std::size_t least_block = std::size_t{1} << 16;
 constexpr std::size_t largest_block = std::size_t{1} << 23;
+constexpr std::size_t bytes_per_name = 8;  // of many names, about
 
 }  // namespace
 
 bool same_name(std::string_view a, std::string_view b) {
-  return a.size() == b.size() &&
-         std::equal(a.begin(), a.end(), b.begin(), [](char x, char y) { return fold(x) == fold(y); });
+  if (a.size() != b.size()) return false;
+  std::size_t at = 0;
+  for (; at + 8 < a.size(); at += 8) {
+    if (fold_word(word_of(a.data() + at, 8)) != fold_word(word_of(b.data() + at, 8))) return false;
+  }
+  const std::size_t last = a.size() <= 8 ? 0 : a.size() - 8;
+  return fold_word(word_of(a.data() + last, a.size() - last)) == fold_word(word_of(b.data() + last, b.size() - last));
 }
 
 std::string folded(std::string_view text) {
@@ -51,7 +94,8 @@ void NameTable::reserve(std::size_t names) {
   std::size_t slots = slots_.size();
   while (slots < names * 2) slots *= 2;
   if (slots != slots_.size()) grow(slots);
-  make_room(texts_, names);
+  texts_.reserve(names);
+  add_block(names * bytes_per_name);
 }
 
 std::size_t NameTable::slot_of(std::string_view text, std::uint32_t hash) const {
@@ -65,9 +109,7 @@ std::size_t NameTable::slot_of(std::string_view text, std::uint32_t hash) const 
 }
 
 void NameTable::grow(std::size_t slots) {
-  std::vector<Slot> old;
-  make_room(old, slots);
-  old.resize(slots);
+  LargeVector<Slot> old(slots);
   old.swap(slots_);
   const std::size_t mask = slots_.size() - 1;
   for (const Slot& slot : old) {
@@ -78,20 +120,19 @@ void NameTable::grow(std::size_t slots) {
   }
 }
 
+void NameTable::add_block(std::size_t bytes) {
+  blocks_.emplace_back().reserve(bytes);
+  kept_bytes_ += bytes;
+}
+
+// Blocks never grow, so that views into them stay good.
 std::string_view NameTable::keep(std::string_view text) {
-  if (text.size() > block_left_) {
-    const std::size_t bytes = std::max(std::clamp(kept_bytes_, least_block, largest_block), text.size());
-    kept_bytes_ += bytes;
-    blocks_.push_back(std::make_unique_for_overwrite<char[]>(bytes));
-    block_next_ = blocks_.back().get();
-    prefer_large_pages(block_next_, bytes);
-    block_left_ = bytes;
-  }
-  char* const start = block_next_;
-  if (!text.empty()) std::memcpy(start, text.data(), text.size());
-  block_next_ += text.size();
-  block_left_ -= text.size();
-  return {start, text.size()};
+  if (blocks_.empty() || blocks_.back().capacity() - blocks_.back().size() < text.size())
+    add_block(std::max(std::clamp(kept_bytes_, least_block, largest_block), text.size()));
+  LargeVector<char>& block = blocks_.back();
+  const std::size_t begin = block.size();
+  block.insert(block.end(), text.begin(), text.end());
+  return {block.data() + begin, text.size()};
 }
 
 NameId NameTable::intern(std::string_view text) {
@@ -106,6 +147,10 @@ NameId NameTable::intern(std::string_view text) {
   texts_.push_back(keep(text));
   slots_[at] = Slot{hash, id};
   return NameId{id};
+}
+
+void NameTable::prepare(std::string_view text) const {
+  __builtin_prefetch(&slots_[hash_of(text) & (slots_.size() - 1)]);
 }
 
 std::optional<NameId> NameTable::find(std::string_view text) const {

@@ -2,13 +2,13 @@
 #pragma once
 
 #include <cstdint>
-#include <memory>
 #include <optional>
 #include <string>
 #include <string_view>
 #include <vector>
 
 #include "base/id.hpp"
+#include "base/pages.hpp"
 
 namespace base {
 
@@ -24,6 +24,9 @@ class NameTable {
 
   // The id of `text`, or nothing when it was never interned.
   [[nodiscard]] std::optional<NameId> find(std::string_view text) const;
+
+  // Fetches what a search for `text` will look at first: a hint for texts that are interned a little later.
+  void prepare(std::string_view text) const;
 
   // The first spelling of a valid id. The view stays good as long as the table lives.
   [[nodiscard]] std::string_view text(NameId id) const { return texts_[id.index()]; }
@@ -42,13 +45,12 @@ class NameTable {
   [[nodiscard]] std::size_t slot_of(std::string_view text, std::uint32_t hash) const;
   void grow(std::size_t slots);
   std::string_view keep(std::string_view text);
+  void add_block(std::size_t bytes);
 
-  std::vector<Slot> slots_;
-  std::vector<std::string_view> texts_;
-  std::vector<std::unique_ptr<char[]>> blocks_;
-  std::size_t kept_bytes_ = 0;  // in all blocks
-  std::size_t block_left_ = 0;
-  char* block_next_ = nullptr;
+  LargeVector<Slot> slots_;
+  LargeVector<std::string_view> texts_;
+  std::vector<LargeVector<char>> blocks_;  // the last has room
+  std::size_t kept_bytes_ = 0;             // room in all blocks
 };
 
 // Whether two texts are one name: equal but for the case of ASCII letters.

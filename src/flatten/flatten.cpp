@@ -2,7 +2,6 @@
 
 #include <algorithm>
 
-#include "base/pages.hpp"
 #include "flatten/instances.hpp"
 
 namespace flatten {
@@ -15,9 +14,9 @@ void reserve(Work& work) {
   const model::Scope& top = work.netlist.scopes.front();
   const std::uint64_t all = work.library.size_of(model::ScopeId{0}, work.limits.nesting);
   const std::size_t elements = static_cast<std::size_t>(std::min(all, work.limits.elements));
-  base::make_room(work.circuit.elements, elements);
-  base::make_room(work.circuit.pins, 2 * elements + elements / 2);
-  base::make_room(work.circuit.nets, elements);
+  work.circuit.elements.reserve(elements);
+  work.circuit.pins.reserve(2 * elements + elements / 2);
+  work.circuit.nets.reserve(elements);
   if (elements > 2 * top.elements.size()) work.names.reserve(work.names.size() + 2 * elements);
 }
 

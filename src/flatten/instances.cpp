@@ -59,7 +59,7 @@ void Instances::refuse(const Frame& caller, const model::ElementCard& card, Prob
 
 // Names are looked up in a set of bits, which is cleared by going through them again.
 void Instances::find_duplicates(ScopeId scope) {
-  const std::vector<model::ElementCard>& cards = work_.netlist.scopes[scope.index()].elements;
+  const base::LargeVector<model::ElementCard>& cards = work_.netlist.scopes[scope.index()].elements;
   if (seen_.size() < work_.names.size()) seen_.resize(work_.names.size());
   for (const model::ElementCard& card : cards) {
     if (seen_[card.name.index()]) {

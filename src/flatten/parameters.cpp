@@ -93,7 +93,7 @@ void Parameters::check_all(const Frame& frame) {
 }
 
 model::ElementId Parameters::source(const Frame& frame, base::NameId name) const {
-  const std::vector<model::Element>& elements = work_.circuit.elements;
+  const base::LargeVector<model::Element>& elements = work_.circuit.elements;
   if (!frame.sources_known) {
     frame.sources_known = true;
     for (std::size_t i = frame.first_element; i < elements.size(); ++i) {

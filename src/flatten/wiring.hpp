@@ -72,7 +72,7 @@ class Wiring {
   model::Circuit& circuit_;
   base::NameId unconnected_;
   std::unordered_set<base::NameId> globals_;
-  std::vector<model::NetId> top_;            // by NameId; names made later are no nodes of the top level
+  base::LargeVector<model::NetId> top_;      // by NameId; names made later are no nodes of the top level
   std::vector<std::uint32_t> slot_of_word_;  // for the words of subcircuits
   std::vector<Nodes> nodes_;                 // by scope
 };

@@ -146,9 +146,9 @@ struct SweptParameter {
 };
 
 struct Circuit {
-  std::vector<Net> nets;          // [0] is ground
-  std::vector<Element> elements;  // in the netlist's order, instances expanded where they stand
-  std::vector<NetId> pins;
+  base::LargeVector<Net> nets;          // [0] is ground
+  base::LargeVector<Element> elements;  // in the netlist's order, instances expanded where they stand
+  base::LargeVector<NetId> pins;
   std::vector<Instance> instances;
   std::vector<DeviceModel> models;
   std::vector<DeviceParameter> device_parameters;

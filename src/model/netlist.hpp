@@ -82,7 +82,7 @@ struct Scope {
   std::vector<ParameterCard> defaults;    // of the .subckt card
   std::vector<ParameterCard> parameters;  // .param cards, in order
   std::vector<ModelCard> models;
-  std::vector<ElementCard> elements;  // in order
+  base::LargeVector<ElementCard> elements;  // in order
   std::vector<ScopeId> scopes;        // subcircuits defined inside
 };
 
@@ -94,9 +94,9 @@ struct MissingInclude {
 
 struct Netlist {
   source::SourceId root;
-  std::vector<CardRecord> cards;  // in reading order, included files where their card stands
+  base::LargeVector<CardRecord> cards;  // in reading order, included files where their card stands
   std::vector<Scope> scopes;      // [0] is the top level
-  std::vector<Word> words;
+  base::LargeVector<Word> words;
   std::vector<Assignment> assignments;
   std::vector<OddLiteral> odd_literals;
   ExpressionPool expressions;

@@ -72,7 +72,7 @@ fs::path canonical_folder(const fs::path& folder, std::error_code& error) {
 
 }  // namespace
 
-base::Result<std::string> read_file(const fs::path& path, const Limits& limits) {
+base::Result<Bytes> read_file(const fs::path& path, const Limits& limits) {
   // O_NONBLOCK: opening a FIFO without a writer must not hang; a regular file does not mind.
   const Descriptor file(::open(path.c_str(), O_RDONLY | O_CLOEXEC | O_NONBLOCK));
   if (file.get() < 0) return failed(path, errno);
@@ -86,7 +86,8 @@ base::Result<std::string> read_file(const fs::path& path, const Limits& limits) 
   // Places hold 32-bit offsets.
   if (size > std::numeric_limits<std::uint32_t>::max())
     return base::Error{fmt::format("{} has {} bytes; files of 4 GiB and more cannot be read", path.string(), size)};
-  std::string bytes(size, '\0');
+  Bytes bytes;
+  bytes.resize(size);
   std::size_t have = 0;
   while (have < bytes.size()) {
     const ssize_t got = ::read(file.get(), bytes.data() + have, bytes.size() - have);

@@ -5,13 +5,14 @@
 #include <string>
 
 #include "base/result.hpp"
+#include "source/bytes.hpp"
 #include "source/limits.hpp"
 
 namespace source {
 
 // The bytes of a regular file that the user named. Errors: not there, not a regular file, unreadable, larger than the
 // limit.
-[[nodiscard]] base::Result<std::string> read_file(const std::filesystem::path& path, const Limits& limits);
+[[nodiscard]] base::Result<Bytes> read_file(const std::filesystem::path& path, const Limits& limits);
 
 // Where `wanted`, written in a file of folder `from`, leads: an existing regular file below `root` once links are
 // resolved. Backslashes count as slashes; an empty folder is the current one. Errors: nothing there; outside the root;

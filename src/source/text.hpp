@@ -10,6 +10,7 @@
 #include <vector>
 
 #include "base/id.hpp"
+#include "source/bytes.hpp"
 
 namespace source {
 
@@ -41,7 +42,7 @@ struct Position {
 
 struct SourceText {
   std::string name;                  // as given on the command line or in the including card
-  std::string bytes;                 // the whole text, as read
+  Bytes bytes;                       // the whole text, as read
   std::optional<Place> included_at;  // the card that asked for it
 };
 

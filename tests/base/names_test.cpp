@@ -103,3 +103,36 @@ TEST_CASE("a name that is far from all is no slip of the pen") {
 TEST_CASE("nothing is no slip of the pen") {
   CHECK(nearest_name("", {"0", "a"}).empty());
 }
+
+TEST_CASE("case is folded at every place of a name, and no other byte is") {
+  for (std::size_t size = 1; size <= 40; ++size) {
+    std::string low(size, 'x');
+    for (std::size_t at = 0; at < size; ++at) {
+      for (int byte = 0; byte < 256; ++byte) {
+        std::string one = low;
+        one[at] = static_cast<char>(byte);
+        CHECK(base::same_name(one, low) == (byte == 'x' || byte == 'X'));
+        if (byte == '[' || byte == '@' || byte == 0xC1) {
+          std::string other = one;
+          other[at] = static_cast<char>(byte ^ 0x20);
+          CHECK_FALSE(base::same_name(one, other));
+        }
+      }
+    }
+  }
+  CHECK(base::same_name("", ""));
+  CHECK_FALSE(base::same_name("abcdefgh", "abcdefghi"));
+}
+
+TEST_CASE("names of every length are found again in any case") {
+  base::NameTable names;
+  std::string text;
+  for (std::size_t size = 0; size < 60; ++size, text += static_cast<char>('a' + size % 26)) {
+    const base::NameId id = names.intern(text);
+    std::string loud = text;
+    for (char& c : loud) c = static_cast<char>(c - 0x20);
+    names.prepare(loud);
+    CHECK(names.intern(loud) == id);
+    CHECK(names.size() == size + 1);
+  }
+}

@@ -4,7 +4,6 @@
 #include <cstdio>
 #include <filesystem>
 #include <memory>
-#include <string>
 #include <utility>
 
 #include "flatten/flatten.hpp"
@@ -22,7 +21,7 @@ struct Board {
   model::Circuit circuit;
 };
 
-std::unique_ptr<Board> read(const std::filesystem::path& path, std::string bytes) {
+std::unique_ptr<Board> read(const std::filesystem::path& path, source::Bytes bytes) {
   auto board = std::make_unique<Board>();
   const source::Limits limits;
   const source::SourceId root = board->sources.add({path.string(), std::move(bytes), std::nullopt});
@@ -32,7 +31,7 @@ std::unique_ptr<Board> read(const std::filesystem::path& path, std::string bytes
   return board;
 }
 
-std::string bytes_of(const std::filesystem::path& path) {
+source::Bytes bytes_of(const std::filesystem::path& path) {
   auto bytes = source::read_file(path, source::Limits{});
   if (bytes.ok()) return std::move(bytes).value();
   std::fprintf(stderr, "%s\n", bytes.error().c_str());
@@ -41,9 +40,9 @@ std::string bytes_of(const std::filesystem::path& path) {
 
 // Only the reading is timed: neither the copy of the text before it nor the end of the board after it.
 void run(benchmark::State& state, const std::filesystem::path& path, bool from_disk) {
-  const std::string text = bytes_of(path);
+  const source::Bytes text = bytes_of(path);
   for (auto _ : state) {
-    std::string copy = from_disk ? std::string() : text;
+    source::Bytes copy = from_disk ? source::Bytes() : text;
     const auto begin = std::chrono::steady_clock::now();
     const auto board = read(path, from_disk ? bytes_of(path) : std::move(copy));
     state.SetIterationTime(std::chrono::duration<double>(std::chrono::steady_clock::now() - begin).count());

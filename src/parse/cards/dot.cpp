@@ -87,6 +87,7 @@ void CardsReader::read_element_card(Card& card, model::CardId id) {
     return card.fail(
         0, fmt::format("expected an element, which begins with a letter, or a dot card, found {}", card.found(0)));
   }
+  for (std::size_t i = 1; i <= 2 && i < card.size(); ++i) card.reading().names.prepare(card.text(i));
   model::ElementCard element;
   element.name = card.name(0);
   element.card = id;

@@ -5,7 +5,6 @@
 #include <fmt/format.h>
 #include <utility>
 
-#include "base/pages.hpp"
 #include "base/text.hpp"
 #include "parse/cards/reader.hpp"
 #include "parse/cards/values.hpp"
@@ -26,13 +25,15 @@ std::uint32_t behind_line(std::string_view bytes, std::size_t line_end) {
   return static_cast<std::uint32_t>(std::min(line_end + 1, bytes.size()));
 }
 
-// The end of the first line from `begin` on that is longer than `most`, as [begin, end); end 0 where there is none.
+// The first line from `begin` on that is longer than `most`, as [begin, end); end 0 where there is none. It goes from
+// line end to line end in steps of `most`, so that few bytes are looked at.
 std::pair<std::uint32_t, std::uint32_t> next_long_line(std::string_view bytes, std::uint32_t begin,
                                                        std::uint64_t most) {
   while (bytes.size() - begin > most) {
-    const auto end = std::min(bytes.find_first_of("\r\n", begin), bytes.size());
-    if (end - begin > most) return {begin, static_cast<std::uint32_t>(end)};
-    begin = static_cast<std::uint32_t>(std::min(end + 1, bytes.size()));
+    const auto last_end = bytes.substr(begin, most + 1).find_last_of("\r\n");
+    if (last_end == std::string_view::npos)
+      return {begin, static_cast<std::uint32_t>(std::min(bytes.find_first_of("\r\n", begin + most), bytes.size()))};
+    begin += static_cast<std::uint32_t>(last_end) + 1;
   }
   return {0, 0};
 }
@@ -197,9 +198,9 @@ void CardsReader::read_root(source::SourceId root) {
   if (bytes.substr(0, utf8_mark.size()) == utf8_mark) bytes.remove_prefix(utf8_mark.size());
   if (is_foreign(bytes, root)) return;
   if (bytes.size() > 4096) {
-    base::make_room(netlist_.cards, bytes.size() / bytes_per_card);
-    base::make_room(netlist_.words, bytes.size() / bytes_per_card * 2);
-    base::make_room(netlist_.scopes[0].elements, bytes.size() / bytes_per_card);
+    netlist_.cards.reserve(bytes.size() / bytes_per_card);
+    netlist_.words.reserve(bytes.size() / bytes_per_card * 2);
+    netlist_.scopes[0].elements.reserve(bytes.size() / bytes_per_card);
     reading_.names.reserve(bytes.size() / bytes_per_name);
   }
   const std::string_view title = first_line(bytes);
