@@ -55,7 +55,10 @@ ExitStatus audit_status(const model::RunReport& report, Gate gate, bool chosen) 
 }
 
 ExitStatus trace_status(const model::RunReport& report) {
-  return in_whole(report) ? ExitStatus::passed : ExitStatus::incomplete;
+  const bool all_read = std::all_of(report.boards.begin(), report.boards.end(), [](const model::BoardReport& board) {
+    return board.reading.error == 0 && !board.include_missing;
+  });
+  return in_whole(report) && all_read ? ExitStatus::passed : ExitStatus::incomplete;
 }
 
 }  // namespace app

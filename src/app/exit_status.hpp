@@ -18,7 +18,7 @@ enum class Gate : unsigned char { error, warning, note, never };
 // With `chosen` (inputs were picked by name) boards may have none as long as one of them has one.
 [[nodiscard]] ExitStatus audit_status(const model::RunReport& report, Gate gate, bool chosen);
 
-// Incomplete: no board, or one that could not be read in whole. Findings do not count.
+// Incomplete: no board, or one of which a card or an include could not be read.
 [[nodiscard]] ExitStatus trace_status(const model::RunReport& report);
 
 }  // namespace app

@@ -1,5 +1,6 @@
 #include "app/options.hpp"
 
+#include <algorithm>
 #include <fmt/format.h>
 #include <memory>
 #include <optional>
@@ -22,12 +23,18 @@ constexpr const char* audit_statuses =
     "unreadable input, an input without a result, no input at all). 2 wins over 1.";
 constexpr const char* trace_statuses = "Exit status: 0 all could be read; 2 not, in whole or in part.";
 
+// The group of options that are known and refused: help and hints leave it out.
+constexpr const char* not_built = "not built";
+
 // Help with the option's value beside its name and nothing else.
 class HelpText : public CLI::Formatter {
  public:
   HelpText() { column_width(22); }
   std::string make_option_opts(const CLI::Option* option) const override {
     return option->get_type_name().empty() ? "" : " " + option->get_type_name();
+  }
+  std::string make_group(std::string group, bool positional, std::vector<const CLI::Option*> options) const override {
+    return group == not_built ? "" : Formatter::make_group(std::move(group), positional, std::move(options));
   }
   std::string make_positionals(const CLI::App*) const override { return ""; }
   std::string make_usage(const CLI::App* app, std::string name) const override {
@@ -68,11 +75,10 @@ void add_audit(CLI::App& app, Raw& raw) {
       "Findings from this level on fail the run: error (the\ndefault), warning, note or never");
   add(app, "--jobs", raw.jobs, "N", "Simulators at once (default: one a processor)");
   add(app, "--timeout", raw.timeout, "SECONDS", "For the simulation of one input (default 20)");
-  constexpr const char* hidden = "";
-  add(app, "--sarif", raw.sarif, "FILE", "")->group(hidden);
-  add(app, "--junit", raw.junit, "FILE", "")->group(hidden);
-  add(app, "--html", raw.html, "FILE", "")->group(hidden);
-  add(app, "--markdown", raw.markdown, "FILE", "")->group(hidden);
+  add(app, "--sarif", raw.sarif, "FILE", "")->group(not_built);
+  add(app, "--junit", raw.junit, "FILE", "")->group(not_built);
+  add(app, "--html", raw.html, "FILE", "")->group(not_built);
+  add(app, "--markdown", raw.markdown, "FILE", "")->group(not_built);
 }
 
 Message refusal(const std::string& text) {
@@ -134,11 +140,15 @@ std::optional<Message> read_shared(const Raw& raw, Request& request) {
     return whole_number(text, 2, request.options.limits.points);
   };
   std::string root;
-  auto message = first_of({take("--json", raw.json, into(request.json, as_written)),
-                           take("--root", raw.root, into(root, as_written)),
-                           take("--as-of", raw.as_of, into(request.as_of, date_of)),
-                           take("--points", raw.points, into(request.options.points, points))});
+  auto message =
+      first_of({take("--json", raw.json, into(request.json, as_written)), take("--root", raw.root, into(root, folder)),
+                take("--as-of", raw.as_of, into(request.as_of, date_of)),
+                take("--points", raw.points, into(request.options.points, points))});
   if (!root.empty()) request.options.root = root;
+  if (!message && raw.points.empty() && request.options.points > request.options.limits.points)
+    return refusal(
+        fmt::format("a sweep has {} points where --points does not say otherwise, more than the limit points = {}",
+                    request.options.points, request.options.limits.points));
   return message;
 }
 
@@ -165,26 +175,38 @@ Command trace_command(const Raw& raw) {
   return command;
 }
 
-// The nearest of the names that can stand there, as a question; else a pointer to the help.
+std::string_view without_dashes(std::string_view word) {
+  word.remove_prefix(std::min(word.find_first_not_of('-'), word.size()));
+  return word;
+}
+
+// The nearest of the names that can stand there, as a question; else a pointer to the help. Dashes count for nothing:
+// they make every option alike.
 std::string hint(const std::string& word, const Texts& known, const std::string& help) {
-  const std::vector<std::string_view> names(known.begin(), known.end());
-  const std::string_view nearest = base::nearest_name(word, names);
-  return nearest.empty() ? fmt::format("; {} tells more", help) : fmt::format("; did you mean {}?", nearest);
+  std::vector<std::string_view> names;
+  for (const std::string& name : known) names.push_back(without_dashes(name));
+  const std::string_view nearest = base::nearest_name(without_dashes(word), names);
+  if (nearest.empty()) return fmt::format("; {} tells more", help);
+  const auto at = std::find(names.begin(), names.end(), nearest) - names.begin();
+  return fmt::format("; did you mean {}?", known[static_cast<std::size_t>(at)]);
 }
 
 Texts option_names(const CLI::App& app) {
   Texts out;
   for (const CLI::Option* option : app.get_options())
     for (const std::string& name : option->get_lnames())
-      if (!option->get_group().empty()) out.push_back("--" + name);
+      if (option->get_group() != not_built) out.push_back("--" + name);
   return out;
 }
 
-// A word that nothing took: an unknown option of a command.
-std::optional<Message> unknown_option(const CLI::App& command) {
+// A word that nothing took: an unknown option of a command, or one of the other command.
+std::optional<Message> unknown_option(const CLI::App& command, const CLI::App& other) {
   for (const std::string& word : command.remaining()) {
     if (word == "--") continue;
     const std::string option = word.substr(0, word.find('='));
+    const Texts of_other = option_names(other);
+    if (std::find(of_other.begin(), of_other.end(), option) != of_other.end())
+      return refusal(fmt::format("{} is an option of {}, not of {}", option, other.get_name(), command.get_name()));
     return refusal(
         fmt::format("unknown option {}{}", base::printable_short(option),
                     hint(option, option_names(command), fmt::format("tapspan {} --help", command.get_name()))));
@@ -239,7 +261,7 @@ Command parse_arguments(const std::vector<std::string>& words) {
   if (draft->parsed()) return unsupported("draft");
   const CLI::App* const command = audit->parsed() ? audit : trace->parsed() ? trace : nullptr;
   if (command == nullptr || !app.remaining().empty()) return no_command(app);
-  if (const auto message = unknown_option(*command)) return *message;
+  if (const auto message = unknown_option(*command, command == audit ? *trace : *audit)) return *message;
   return command == audit ? audit_command(raw) : trace_command(raw);
 }
 

@@ -40,6 +40,18 @@ int write_to(const fs::path& path, int flags, std::string_view bytes) {
   return error != 0 ? error : closed;
 }
 
+// The file that a name means, which need not be there yet.
+fs::path behind_links(fs::path path) {
+  constexpr int most_links = 40;
+  std::error_code error;
+  for (int i = 0; i < most_links && fs::is_symlink(fs::symlink_status(path, error)); ++i) {
+    const fs::path next = fs::read_symlink(path, error);
+    if (error) break;
+    path = path.parent_path() / next;
+  }
+  return path;
+}
+
 }  // namespace
 
 base::Result<base::Done> write_file(const fs::path& path, std::string_view bytes) {
@@ -50,7 +62,8 @@ base::Result<base::Done> write_file(const fs::path& path, std::string_view bytes
     if (error != 0) return failed(path.string(), error);
     return base::Done{};
   }
-  const fs::path target = fs::exists(status) ? fs::canonical(path, ignored) : path;
+  const fs::path target = behind_links(path);
+  if (fs::is_symlink(fs::symlink_status(target, ignored))) return failed(path.string(), ELOOP);
   const fs::path fresh = target.string() + fmt::format(".{}.new", ::getpid());
   int error = write_to(fresh, O_CREAT | O_EXCL, bytes);
   if (error == EEXIST) return failed(fresh.string(), error);

@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <filesystem>
 #include <fmt/format.h>
+#include <string>
+#include <vector>
 
 #include "app/output.hpp"
 #include "app/values.hpp"
@@ -12,6 +14,8 @@
 
 namespace app {
 namespace {
+
+namespace fs = std::filesystem;
 
 model::RunReport collect(const Request& request, const World& world) {
   model::RunReport out;
@@ -26,14 +30,40 @@ model::RunReport collect(const Request& request, const World& world) {
   return out;
 }
 
-// The netlist that a report would overwrite, if any.
-const std::string* overwritten(const Request& request) {
-  const auto same = [&request](const std::string& netlist) {
-    std::error_code error;
-    return std::filesystem::equivalent(request.json, netlist, error) && !error;
-  };
-  const auto at = std::find_if(request.netlists.begin(), request.netlists.end(), same);
-  return at == request.netlists.end() ? nullptr : &*at;
+bool same_file(const fs::path& a, const fs::path& b) {
+  std::error_code error;
+  return fs::equivalent(a, b, error) && !error;
+}
+
+// What the user named that the report would overwrite, if any.
+const fs::path* named_and_overwritten(const Request& request, const std::vector<fs::path>& named) {
+  const auto at =
+      std::find_if(named.begin(), named.end(), [&](const fs::path& path) { return same_file(request.json, path); });
+  return at == named.end() ? nullptr : &*at;
+}
+
+// What the boards read that the report would overwrite, if any: their declarations and includes too, whose names are
+// seen from the netlist's folder.
+const std::string* read_and_overwritten(const Request& request, const model::RunReport& report) {
+  for (const model::BoardReport& board : report.boards) {
+    for (std::uint32_t i = 0; i < board.sources.size(); ++i) {
+      const std::string& name = board.sources[source::SourceId{i}].name;
+      if (same_file(request.json, name) || same_file(request.json, fs::path(board.netlist).parent_path() / name))
+        return &name;
+    }
+  }
+  return nullptr;
+}
+
+// Whether inputs were picked by name and no board has one of them, though all was read.
+bool finds_nothing(const Request& request, const model::RunReport& report) {
+  const auto has_none = [](const model::BoardReport& board) { return board.done_in_whole && board.inputs.empty(); };
+  return !request.options.only.empty() && std::all_of(report.boards.begin(), report.boards.end(), has_none);
+}
+
+ExitStatus refuse_overwriting(const std::string& what, const World& world) {
+  world.err(fmt::format("tapspan: --json: {} is read by this run\n", base::printable_short(what, 200)));
+  return ExitStatus::incomplete;
 }
 
 // Whether a write went well; if not, says why.
@@ -55,12 +85,16 @@ bool write_reports(const model::RunReport& report, const Request& request, bool 
 
 template <class Judge>
 ExitStatus carry_out(const Request& request, bool trace, const World& world, Judge status_of) {
-  if (const std::string* netlist = overwritten(request)) {
-    world.err(fmt::format("tapspan: --json: {} is a netlist of this run\n", base::printable_short(*netlist, 200)));
+  std::vector<fs::path> named(request.netlists.begin(), request.netlists.end());
+  named.insert(named.end(), request.options.with.begin(), request.options.with.end());
+  if (const fs::path* path = named_and_overwritten(request, named)) return refuse_overwriting(path->string(), world);
+  const model::RunReport report = collect(request, world);
+  if (const std::string* name = read_and_overwritten(request, report)) return refuse_overwriting(*name, world);
+  const bool well = write_reports(report, request, trace, world);
+  if (finds_nothing(request, report)) {
+    world.err("tapspan: --only: no declared input has such a name\n");
     return ExitStatus::incomplete;
   }
-  const model::RunReport report = collect(request, world);
-  const bool well = write_reports(report, request, trace, world);
   return well ? status_of(report) : ExitStatus::incomplete;
 }
 

@@ -37,12 +37,12 @@ base::Result<simulate::Session> open_session(const AuditCommand& command) {
 }  // namespace
 
 ExitStatus start(const AuditCommand& command) {
-  auto session = open_session(command);
-  if (!session.ok()) {
-    write_standard_error(fmt::format("tapspan: {}\n", base::printable(session.error())));
-    return ExitStatus::incomplete;
-  }
-  return run(command, world_with(command.request, &*session));
+  auto opened = open_session(command);
+  // Reports are written in every case: without a simulator they say so of each input.
+  if (!opened.ok()) write_standard_error(fmt::format("tapspan: {}\n", base::printable(opened.error())));
+  simulate::Session session =
+      opened.ok() ? std::move(opened).value() : simulate::Session::without_worker(opened.error());
+  return run(command, world_with(command.request, &session));
 }
 
 ExitStatus start(const TraceCommand& command) {

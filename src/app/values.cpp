@@ -6,8 +6,10 @@
 #include <chrono>
 #include <cmath>
 #include <ctime>
+#include <filesystem>
 #include <fmt/format.h>
 #include <limits>
+#include <system_error>
 #include <vector>
 
 #include "base/names.hpp"
@@ -104,6 +106,12 @@ base::Result<base::Done> set_limit(std::string_view text, source::Limits& limits
   if (!number) return base::Error{number.error()};
   limits.*(found->member) = *number;
   return base::Done{};
+}
+
+base::Result<std::string> folder(const std::string& text) {
+  std::error_code ignored;
+  if (std::filesystem::is_directory(text, ignored)) return text;
+  return base::Error{fmt::format("expected a folder, got {}", quoted(std::string_view(text)))};
 }
 
 std::string today() {

@@ -26,6 +26,9 @@ namespace app {
 // NAME=N: sets the limit of that name.
 [[nodiscard]] base::Result<base::Done> set_limit(std::string_view text, source::Limits& limits);
 
+// A folder that is there.
+[[nodiscard]] base::Result<std::string> folder(const std::string& text);
+
 // Today where the machine stands, as YYYY-MM-DD.
 [[nodiscard]] std::string today();
 

@@ -109,6 +109,7 @@ BoardRun audit_board(const std::string& netlist, const Options& options, simulat
     return run;
   }
   report.reading = flatten::count_cards(reading.netlist);
+  report.include_missing = !reading.netlist.missing_includes.empty();
   report.not_checked = not_checked(reading.sheet);
   model::Division division;
   if (worth_auditing(reading, report)) {
@@ -118,8 +119,8 @@ BoardRun audit_board(const std::string& netlist, const Options& options, simulat
                        reading.diagnostics);
     if (source::count(reading.diagnostics, base::Level::error) != before)
       report.done_in_whole = false;
-    else if (division.dividers.empty())
-      complain(reading, report, "no declared input is left to audit");
+    else if (division.dividers.empty() && options.only.empty())
+      complain(reading, report, "the declared converters have no input to audit");
   }
   const judge::BoardFacts facts = facts_of(reading, division);
   take_inputs(reading, division, report);

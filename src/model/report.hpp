@@ -30,6 +30,7 @@ struct BoardReport {
   FindingList findings;                    // of the board as a whole
   std::vector<std::string> not_checked;    // declared, but no rule of this version looks at it
   bool done_in_whole = true;               // false: exit status 2
+  bool include_missing = false;            // an include that could not be read
   std::map<NetId, std::string> net_names;  // of every net that a divider names: tap, candidates, nets; ground is "0"
   source::Sources sources;                 // the texts that places point into
 };

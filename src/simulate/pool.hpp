@@ -6,6 +6,7 @@
 #include <optional>
 #include <span>
 #include <string>
+#include <utility>
 #include <vector>
 
 #include "simulate/plan_run.hpp"
@@ -20,6 +21,9 @@ class Session::Pool {
 
   // Starts the first process. Error: it cannot be started.
   [[nodiscard]] base::Result<base::Done> start();
+
+  // From here on every plan fails with this reason.
+  void give_up(std::string reason) { broken_ = std::move(reason); }
 
   void solve(std::span<const model::Plan> plans, const model::Circuit& circuit, const base::NameTable& names,
              const std::function<void(std::size_t, model::Outcome)>& done);

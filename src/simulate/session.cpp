@@ -1,5 +1,7 @@
 #include "simulate/session.hpp"
 
+#include <utility>
+
 #include "simulate/pool.hpp"
 
 namespace simulate {
@@ -7,6 +9,12 @@ namespace simulate {
 base::Result<Session> Session::open(const SessionOptions& options) {
   auto pool = std::make_unique<Pool>(options);
   if (auto started = pool->start(); !started) return base::Error{started.error()};
+  return Session(std::move(pool));
+}
+
+Session Session::without_worker(std::string reason) {
+  auto pool = std::make_unique<Pool>(SessionOptions{});
+  pool->give_up(std::move(reason));
   return Session(std::move(pool));
 }
 

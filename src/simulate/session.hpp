@@ -30,6 +30,9 @@ class Session {
   // not ready in time, fails every plan with a sentence that says so.
   [[nodiscard]] static base::Result<Session> open(const SessionOptions& options);
 
+  // A session without any worker: every plan fails with `reason`.
+  [[nodiscard]] static Session without_worker(std::string reason);
+
   Session(Session&&) noexcept;
   Session& operator=(Session&&) noexcept;
   ~Session();  // kills and reaps the workers, removes their private directory

@@ -112,4 +112,11 @@ TEST_CASE("a trace passes when all could be read, whatever was found") {
   part.done_in_whole = false;
   CHECK(trace_status(run({board({}), part})) == ExitStatus::incomplete);
   CHECK(trace_status(run({})) == ExitStatus::incomplete);
+  model::BoardReport broken = board({traced});
+  broken.reading.error = 1;
+  CHECK(trace_status(run({broken})) == ExitStatus::incomplete);
+  CHECK(audit_status(run({board({input()})}), Gate::error, false) == ExitStatus::passed);
+  model::BoardReport without = board({traced});
+  without.include_missing = true;
+  CHECK(trace_status(run({without})) == ExitStatus::incomplete);
 }

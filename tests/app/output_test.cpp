@@ -42,6 +42,21 @@ TEST_CASE("a report through a link is written where the link leads") {
   CHECK(contents(folder / "real.json") == "new");
 }
 
+TEST_CASE("a link that leads nowhere yet stays a link: the report is made where it leads") {
+  const Folder folder;
+  fs::create_symlink("later.json", folder / "link.json");
+  CHECK(write_file(folder / "link.json", "new").ok());
+  CHECK(fs::is_symlink(folder / "link.json"));
+  CHECK(contents(folder / "later.json") == "new");
+}
+
+TEST_CASE("a link to itself is an error") {
+  const Folder folder;
+  fs::create_symlink("link.json", folder / "link.json");
+  CHECK_FALSE(write_file(folder / "link.json", "new").ok());
+  CHECK(folder.entries() == 1);
+}
+
 TEST_CASE("a report into a folder that is not there is an error with its reason") {
   const Folder folder;
   const std::string path = folder / "missing/out.json";

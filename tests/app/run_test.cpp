@@ -133,9 +133,49 @@ TEST_CASE("a report never overwrites a netlist of the run") {
   Fake fake;
   CHECK(run(audited({netlist}, folder / "../" / folder.path().filename() / "board.cir"), fake.world()) ==
         ExitStatus::incomplete);
-  CHECK(fake.err == "tapspan: --json: " + netlist + " is a netlist of this run\n");
+  CHECK(fake.err == "tapspan: --json: " + netlist + " is read by this run\n");
   CHECK(fake.asked.empty());
   CHECK(contents(netlist) == "R1 a b 1\n");
+}
+
+TEST_CASE("a report never overwrites declarations or an included file, named by the user or found beside the netlist") {
+  const Folder folder;
+  for (const char* name : {"board.cir", "board.tap.toml", "parts.inc", "more.toml"})
+    std::ofstream(folder / name) << "kept";
+  for (const char* name : {"board.tap.toml", "parts.inc", "more.toml"}) {
+    Fake fake;
+    app::World world = fake.world();
+    world.board = [&](const std::string& netlist) {
+      audit::BoardRun run = fake.board(netlist);
+      run.report.sources.add({netlist, "kept", {}});
+      run.report.sources.add({(folder / "board.tap.toml").string(), "kept", {}});
+      run.report.sources.add({"parts.inc", "kept", {}});
+      return run;
+    };
+    AuditCommand command = audited({folder / "board.cir"}, folder / name);
+    command.request.options.with = {folder / "more.toml"};
+    CHECK(run(command, world) == ExitStatus::incomplete);
+    CHECK(has(fake.err, "tapspan: --json: "));
+    CHECK(has(fake.err, std::string(name) + " is read by this run\n"));
+    CHECK(contents(folder / name) == "kept");
+  }
+}
+
+TEST_CASE("names that no declared input has are told once, and are status 2") {
+  Fake fake;
+  app::World world = fake.world();
+  world.board = [&fake](const std::string& netlist) {
+    audit::BoardRun run = fake.board(netlist);
+    run.report.inputs.clear();
+    return run;
+  };
+  AuditCommand command = audited({"good", "gated"});
+  command.request.options.only = {"NOPE*"};
+  CHECK(run(command, world) == ExitStatus::incomplete);
+  CHECK(has(fake.err, "tapspan: --only: no declared input has such a name\n"));
+  TraceCommand trace;
+  trace.request = command.request;
+  CHECK(run(trace, world) == ExitStatus::incomplete);
 }
 
 TEST_CASE("a trace tells what was found and ends well when all could be read") {

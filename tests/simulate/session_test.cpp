@@ -75,6 +75,18 @@ TEST_CASE("without a worker a session does not open, and says which program is m
   CHECK_FALSE(test::has_children());
 }
 
+TEST_CASE("a session without a worker fails every plan with its reason, and names no library") {
+  std::vector<model::Plan> plans;
+  const Board board = many_plans(plans);
+  simulate::Session session = simulate::Session::without_worker("the simulator is out");
+  std::size_t failed = 0;
+  session.solve(plans, board.circuit, board.names, [&failed](std::size_t, const model::Outcome& outcome) {
+    if (outcome.failure == "the simulator is out") ++failed;
+  });
+  CHECK(failed == plans.size() - 1);  // one has nothing to solve and fails by itself
+  CHECK(session.simulator().empty());
+}
+
 TEST_CASE("a session says which library its worker has") {
   const auto session = simulate::Session::open(test::real_worker());
   REQUIRE(session.ok());
