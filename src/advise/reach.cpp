@@ -7,6 +7,7 @@
 #include <vector>
 
 #include "advise/search.hpp"
+#include "network/corner.hpp"
 #include "network/sweep.hpp"
 
 namespace advise {
@@ -29,10 +30,10 @@ class Reading {
   [[nodiscard]] std::span<const model::NodeId> watched() const { return {nodes_.data(), count_}; }
 
   // With the free branch at the value that `share` stands for.
-  [[nodiscard]] double at(const network::FreeBranch& free, std::size_t condition, double share) const {
+  [[nodiscard]] network::Quotient at(const network::FreeBranch& free, std::size_t condition, double share) const {
     const double low = low_ ? free.mixed(condition, low_, share) : input_.nominal_low;
     const double high = high_ ? free.mixed(condition, high_, share) : input_.nominal_high;
-    return input_.gain * (free.mixed(condition, 0, share) - low) / (high - low);
+    return {input_.gain * (free.mixed(condition, 0, share) - low), high - low};
   }
 
  private:
@@ -62,15 +63,11 @@ struct Extent {
   [[nodiscard]] double gap() const { return std::min(lowest, 1 - highest); }
 };
 
-// No leakage, all of it out of the pin, all of it into it.
+// No leakage, then each alone.
 std::vector<std::vector<Override>> leakages(const model::ProbedNetwork& whole) {
   std::vector<std::vector<Override>> conditions(1);
-  for (const double sign : {1.0, -1.0}) {
-    std::vector<Override> held;
-    for (std::size_t i = 0; i < whole.leakages.size(); ++i)
-      if (whole.leakage_amperes[i] != 0) held.push_back({whole.leakages[i], sign * whole.leakage_amperes[i]});
-    if (!held.empty()) conditions.push_back(std::move(held));
-  }
+  for (std::size_t i = 0; i < whole.leakages.size(); ++i)
+    if (whole.leakage_amperes[i] != 0) conditions.push_back({{whole.leakages[i], whole.leakage_amperes[i]}});
   return conditions;
 }
 
@@ -87,20 +84,24 @@ class Trials {
       if (!free) return std::nullopt;
       trials.states_.push_back(std::move(*free));
     }
-    trials.conditions_ = conditions.size();
+    trials.moves_.resize(conditions.size() - 1);
+    trials.signs_.resize(conditions.size() - 1);
     return trials;
   }
 
-  [[nodiscard]] Trial at(double ohms, double gap_limit) const {
+  [[nodiscard]] Trial at(double ohms, double gap_limit) {
     Extent nominal;
     Extent all;
     for (const auto& state : states_) {
       const double share = state.share(ohms);
-      for (std::size_t c = 0; c < conditions_; ++c) {
-        const double reading = reading_.at(state, c, share);
-        all.add(reading);
-        if (c == 0) nominal.add(reading);
+      const network::Quotient still = reading_.at(state, 0, share);
+      nominal.add(still.over / still.under);
+      for (std::size_t i = 0; i < moves_.size(); ++i) {
+        const network::Quotient leaking = reading_.at(state, i + 1, share);
+        moves_[i] = {leaking.over - still.over, leaking.under - still.under};
       }
+      all.add(network::extreme(still, moves_, network::Wanted::largest, signs_));
+      all.add(network::extreme(still, moves_, network::Wanted::smallest, signs_));
     }
     return {nominal.span(), all.gap() - gap_limit};
   }
@@ -110,7 +111,8 @@ class Trials {
 
   Reading reading_;
   std::vector<network::FreeBranch> states_;
-  std::size_t conditions_ = 0;
+  std::vector<network::Quotient> moves_;  // of each leakage, at the state that is looked at
+  std::vector<signed char> signs_;
 };
 
 struct Candidate {
@@ -187,7 +189,7 @@ std::optional<Reach> best_resistor(const model::Divider& divider, std::span<cons
   double best_change = 0;
   const model::PartName* best_part = nullptr;
   for (const Candidate& candidate : candidates(divider, swept)) {
-    const auto trials = Trials::make(divider, candidate.branch, candidate.ohms, states, leakage);
+    auto trials = Trials::make(divider, candidate.branch, candidate.ohms, states, leakage);
     if (!trials) continue;
     const auto found = largest_span(candidate.ohms, [&](double ohms) { return trials->at(ohms, gap_limit); });
     if (!found) continue;
@@ -199,14 +201,6 @@ std::optional<Reach> best_resistor(const model::Divider& divider, std::span<cons
   }
   if (!best) return std::nullopt;
   return Reach{best_part->name, best->ohms, best->span};
-}
-
-std::optional<Reach> best_resistor(const model::Divider& divider, std::span<const double> sensor_values,
-                                   double gap_limit) {
-  const auto& swept = divider.whole.swept;
-  if (swept.size() != 1 || swept.front().quantity == model::SweptQuantity::value) return std::nullopt;
-  const model::SweptValues values{swept.front().branch, false, {sensor_values.begin(), sensor_values.end()}};
-  return best_resistor(divider, std::span(&values, 1), gap_limit);
 }
 
 }  // namespace advise

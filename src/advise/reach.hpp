@@ -24,16 +24,11 @@ struct Reach {
 
 // Over the value of one fixed resistor of the arms (the one that reaches most), from a thousandth to a thousand times
 // its value: the largest span of the pin's nominal reading that keeps both gaps at `gap_limit` or more, leakage of
-// either sign included. Where many values reach the same, the nearest to the present one. `sensor_values` are what
-// divider.whole.swept takes over the sweep: ohms, or volts of a rail. Nothing where no value of any fixed resistor
-// keeps the gaps, and where what is swept is not one branch's ohms or volts. Nonlinear branches count as open.
-[[nodiscard]] std::optional<Reach> best_resistor(const model::Divider& divider, std::span<const double> sensor_values,
-                                                 double gap_limit);
-
-// The same with the values of each swept branch of divider.whole.network, as a plan holds them: for sensors that the
-// netlist models itself. One swept branch is followed at its extremes, where a linear network's reading has its own;
-// several are followed at up to eleven points of the sweep, the ends included. Nothing where a value is put into an
-// expression (is_variable).
+// either sign included. Where many values reach the same, the nearest to the present one. `swept` are the values of
+// each swept branch of divider.whole.network, as a plan holds them: one swept branch is followed at its extremes, where
+// a linear network's reading has its own; several are followed at up to eleven points of the sweep, the ends included.
+// Nothing where no value of any fixed resistor keeps the gaps, nothing is swept, or a value is put into an expression
+// (is_variable). Nonlinear branches count as open.
 [[nodiscard]] std::optional<Reach> best_resistor(const model::Divider& divider,
                                                  std::span<const model::SweptValues> swept, double gap_limit);
 

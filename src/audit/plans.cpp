@@ -1,14 +1,21 @@
 #include "audit/plans.hpp"
 
 #include <algorithm>
+#include <cmath>
+#include <iterator>
+#include <string>
 #include <utility>
 
+#include "audit/leakage.hpp"
+#include "audit/slope.hpp"
 #include "divide/sweep_values.hpp"
 #include "network/linear.hpp"
 #include "network/sweep.hpp"
 
 namespace audit {
 namespace {
+
+const std::string no_closed_solution = "its network has no closed solution: ";
 
 std::vector<model::NodeId> watched_nodes(const model::ProbedNetwork& probed) {
   std::vector<model::NodeId> nodes{probed.probe};
@@ -17,29 +24,23 @@ std::vector<model::NodeId> watched_nodes(const model::ProbedNetwork& probed) {
   return nodes;
 }
 
-std::vector<model::Override> leakage_overrides(const model::ProbedNetwork& probed, double sign) {
-  std::vector<model::Override> held;
-  for (std::size_t i = 0; i < probed.leakages.size(); ++i)
-    held.push_back({probed.leakages[i], sign * probed.leakage_amperes[i]});
-  return held;
+bool among(std::span<const model::ConditionKind> needs, model::ConditionKind kind) {
+  return std::find(needs.begin(), needs.end(), kind) != needs.end();
 }
 
-std::vector<model::Condition> conditions_of(const model::ProbedNetwork& probed,
-                                            std::span<const model::ConditionKind> needs) {
+// Where one side of the leakage's envelope is wanted both are solved: a set of signs found for one may reach further on
+// the other.
+base::Result<std::vector<model::Condition>> conditions_of(const model::Divider& divider,
+                                                          std::span<const model::ConditionKind> needs,
+                                                          std::span<const model::SweptValues> swept,
+                                                          std::size_t points) {
   std::vector<model::Condition> conditions;
-  for (const model::ConditionKind kind : needs) switch (kind) {
-      case model::ConditionKind::nominal:
-        conditions.push_back({kind, {}});
-        break;
-      case model::ConditionKind::leakage_high:
-        if (!probed.leakages.empty()) conditions.push_back({kind, leakage_overrides(probed, 1)});
-        break;
-      case model::ConditionKind::leakage_low:
-        if (!probed.leakages.empty()) conditions.push_back({kind, leakage_overrides(probed, -1)});
-        break;
-      case model::ConditionKind::bare:
-        break;  // has a network of its own
-    }
+  if (among(needs, model::ConditionKind::nominal)) conditions.push_back({model::ConditionKind::nominal, {}});
+  if (!among(needs, model::ConditionKind::leakage_high) && !among(needs, model::ConditionKind::leakage_low))
+    return conditions;
+  auto leaking = leakage_conditions(divider, swept, points);
+  if (!leaking.ok()) return base::Error{no_closed_solution + leaking.error()};
+  std::move(leaking->begin(), leaking->end(), std::back_inserter(conditions));
   return conditions;
 }
 
@@ -84,6 +85,7 @@ base::Result<base::Done> unpack_conditions(const model::Divider& divider, const 
                                            judge::Solved& solved) {
   const std::size_t points = prepared.at.size();
   const std::size_t width = plan.watched.size() * points;
+  std::vector<LeakageCorner> corners;
   for (std::size_t c = 0; c < plan.conditions.size(); ++c) {
     const auto& condition = plan.conditions[c];
     const std::span<const double> volts = std::span(whole.volts).subspan(c * width, width);
@@ -91,22 +93,15 @@ base::Result<base::Done> unpack_conditions(const model::Divider& divider, const 
     std::optional<judge::Solved::Volts> closed;
     if (divider.whole.network.linear) {
       auto form = closed_form(divider.input, divider.whole, prepared.swept, points, condition.held);
-      if (!form.ok()) return base::Error{"its network has no closed solution: " + form.error()};
+      if (!form.ok()) return base::Error{no_closed_solution + form.error()};
       closed = std::move(*form);
     }
-    switch (condition.kind) {
-      case model::ConditionKind::leakage_high:
-        solved.leakage_high = std::move(unpacked), solved.closed_form_high = std::move(closed);
-        break;
-      case model::ConditionKind::leakage_low:
-        solved.leakage_low = std::move(unpacked), solved.closed_form_low = std::move(closed);
-        break;
-      case model::ConditionKind::nominal:
-      case model::ConditionKind::bare:
-        solved.nominal = std::move(unpacked), solved.closed_form = std::move(closed);
-        break;
-    }
+    if (condition.kind == model::ConditionKind::nominal)
+      solved.nominal = std::move(unpacked), solved.closed_form = std::move(closed);
+    else
+      corners.push_back({condition.kind, std::move(unpacked), std::move(closed)});
   }
+  join_leakage(divider.input, corners, solved);
   return base::Done{};
 }
 
@@ -125,9 +120,12 @@ base::Result<Prepared> prepare(const model::Divider& divider, const model::Circu
   auto bare_swept = divide::swept_values(divider.bare, circuit, sensor, prepared.at);
   if (!bare_swept.ok()) return base::Error{bare_swept.error()};
   prepared.bare_swept = std::move(bare_swept).value();
+  prepared.bare_slope = bare_slopes(divider, circuit, sensor, prepared.at);
   for (const model::SweptValues& values : prepared.swept)
     if (values.branch == divider.whole.sensor && !values.is_variable) prepared.sensor_ohms = values.values;
-  prepared.whole = plan_of(divider.whole, prepared.swept, conditions_of(divider.whole, needs), prepared.at.size());
+  auto conditions = conditions_of(divider, needs, prepared.swept, prepared.at.size());
+  if (!conditions.ok()) return base::Error{conditions.error()};
+  prepared.whole = plan_of(divider.whole, prepared.swept, std::move(*conditions), prepared.at.size());
   if (!divider.bare.network.linear)
     prepared.bare = plan_of(divider.bare, prepared.bare_swept, {{model::ConditionKind::bare, {}}}, prepared.at.size());
   return prepared;
@@ -138,6 +136,7 @@ base::Result<judge::Solved> solved_of(const model::Divider& divider, const Prepa
   judge::Solved solved;
   solved.at = prepared.at;
   solved.sensor_ohms = prepared.sensor_ohms;
+  solved.bare_slope = prepared.bare_slope;
   solved.rung = whole.rung;
   solved.stepped = whole.stepped;
   solved.alone_difference = whole.alone_difference;
@@ -161,8 +160,8 @@ base::Result<judge::Solved> solved_of(const model::Divider& divider, const Prepa
 void settle_range(model::Divider& divider, const judge::Solved& solved) {
   const std::size_t middle = solved.at.size() / 2;
   model::Input& input = divider.input;
-  if (divider.whole.low.valid() && input.nominal_low == 0) input.nominal_low = solved.nominal.low[middle];
-  if (divider.whole.high.valid() && input.nominal_high == 0) input.nominal_high = solved.nominal.high[middle];
+  if (divider.whole.low.valid() && std::isnan(input.nominal_low)) input.nominal_low = solved.nominal.low[middle];
+  if (divider.whole.high.valid() && std::isnan(input.nominal_high)) input.nominal_high = solved.nominal.high[middle];
 }
 
 }  // namespace audit

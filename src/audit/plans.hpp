@@ -20,6 +20,7 @@ struct Prepared {
   std::vector<double> sensor_ohms;  // by law or expression; empty where only a solution tells, or for a swept rail
   std::vector<model::SweptValues> swept;  // of the whole network
   std::vector<model::SweptValues> bare_swept;
+  std::vector<double> bare_slope;   // of bare_slopes(); empty where only the sweep's own points tell
   model::Plan whole;                // may be moved out once prepared
   std::optional<model::Plan> bare;  // only where the arms are not linear: else the closed form is the bare divider
 };

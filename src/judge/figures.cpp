@@ -35,10 +35,11 @@ void set_gaps(model::Figures& figures, const Envelope& around) {
   figures.gap_high_point = static_cast<std::size_t>(highest - around.high.begin());
 }
 
-// d(reading)/d(measurand) at point i: of the parabola through the point and its neighbours (the central difference
-// where points are evenly spaced; one-sided at the ends). Where a steep bend turns the parabola's end the wrong way,
-// the secant to the neighbour. Nothing where the curve is flat.
-std::optional<double> slope_at(const Values& at, const Values& reading, std::size_t i) {
+// d(reading)/d(measurand) at point i as the sweep's own points tell it, for a divider that only the simulator solves:
+// where they are few or the curve bends between them it is as rough as they are. Of the parabola through the point and
+// its neighbours (the central difference where points are evenly spaced; one-sided at the ends). Where a steep bend
+// turns the parabola's end the wrong way, the secant to the neighbour. Nothing where the curve is flat.
+std::optional<double> slope_of_sweep(const Values& at, const Values& reading, std::size_t i) {
   const std::size_t count = at.size();
   if (count < 2) return std::nullopt;
   const auto secant = [&](std::size_t a, std::size_t b) { return (reading[b] - reading[a]) / (at[b] - at[a]); };
@@ -61,6 +62,11 @@ std::optional<double> slope_at(const Values& at, const Values& reading, std::siz
   return flat || !std::isfinite(slope) ? std::nullopt : std::optional{slope};
 }
 
+std::optional<double> slope_at(const Solved& solved, const Values& bare, std::size_t i) {
+  if (!solved.bare_slope.empty() && std::isfinite(solved.bare_slope[i])) return solved.bare_slope[i];
+  return slope_of_sweep(solved.at, bare, i);
+}
+
 // Keeps the largest value and its point; what is no number counts as larger than any.
 void keep_largest(std::optional<double>& figure, std::size_t& point, double value, std::size_t i) {
   if (figure && (std::isnan(*figure) || value <= *figure)) return;
@@ -68,13 +74,13 @@ void keep_largest(std::optional<double>& figure, std::size_t& point, double valu
   point = i;
 }
 
-void set_load_errors(model::Figures& figures, const model::Input& input, const Values& at, const Values& bare,
-                     const Envelope& around) {
+void set_load_errors(model::Figures& figures, const model::Input& input, const Solved& solved, const Envelope& around) {
+  const Values bare = bare_readings(input, solved);
   for (std::size_t i = 0; i < bare.size(); ++i) {
     if (!on_scale(bare[i])) continue;
     const double error = std::max(std::fabs(around.low[i] - bare[i]), std::fabs(around.high[i] - bare[i]));
     keep_largest(figures.load_error_lsb, figures.load_error_point, lsb_of(input, error), i);
-    if (const auto slope = slope_at(at, bare, i))
+    if (const auto slope = slope_at(solved, bare, i))
       keep_largest(figures.load_error_measurand, figures.load_error_measurand_point, error / std::fabs(*slope), i);
   }
 }
@@ -99,7 +105,7 @@ model::Figures figures_of(const model::Divider& divider, const Solved& solved, c
   assert(nominal.size() == sweep.at.size());
   figures.span_use = span_of(nominal);
   set_gaps(figures, around);
-  set_load_errors(figures, input, sweep.at, bare_readings(input, solved), around);
+  set_load_errors(figures, input, solved, around);
   const auto hold = [&](const Solved::Volts& simulated, const std::optional<Solved::Volts>& closed_form) {
     if (closed_form) set_engine_gap(figures, input, readings(input, simulated), *closed_form);
   };

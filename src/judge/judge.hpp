@@ -36,6 +36,8 @@ struct Solved {
   // The bare divider at its tap: by ngspice where the arms are not linear, else in closed form. Ends left empty stand
   // for those of `nominal`.
   Volts bare;
+  std::vector<double> bare_slope;  // its d(reading)/d(measurand); empty, or not a number: what the points of the sweep
+                                   // tell
   std::optional<Volts> closed_form;       // the whole network again, where it is linear; nominal
   std::optional<Volts> closed_form_high;  // and with the leakage's two signs
   std::optional<Volts> closed_form_low;

@@ -11,10 +11,11 @@ namespace model {
 
 // The conditions under which a sweep is solved. Each rule names those that it needs; audit merges them.
 enum class ConditionKind : std::uint8_t {
-  nominal,       // everything nominal, leakage zero
-  leakage_high,  // every leakage pushes the pin up
-  leakage_low,   // every leakage pulls it down
-  bare,          // the bare divider, where its arms are not linear
+  nominal,        // everything nominal, leakage zero
+  leakage_high,   // every leakage, each with the sign that puts the reading up
+  leakage_low,    // and each with the sign that puts it down
+  bare,           // the bare divider, where its arms are not linear
+  leakage_alone,  // one leakage with one sign
 };
 
 // A branch held at a value (ohms, volts, amperes) in place of its own.

@@ -49,7 +49,7 @@ inline Made with_volts(double rail_volts) {
 
 inline void sweep_sensor(Made& made) {
   made.divider.whole.sensor = made.sensor;
-  made.divider.whole.swept = {{made.sensor, model::SweptQuantity::ohms}};
+  made.divider.whole.swept = {{made.sensor, model::SweptQuantity::ohms, {}}};
 }
 
 inline Made sensor_below(double fixed_ohms) {

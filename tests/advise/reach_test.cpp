@@ -22,6 +22,13 @@ std::vector<double> thermistor() {
   return ohms;
 }
 
+// The best resistor where one branch sweeps through these values.
+std::optional<advise::Reach> best_over(const model::Divider& divider, const std::vector<double>& values,
+                                       double gap_limit) {
+  const model::SweptValues swept{divider.whole.swept.front().branch, false, values};
+  return best_resistor(divider, {&swept, 1}, gap_limit);
+}
+
 double geometric_mean(const std::vector<double>& ohms) {
   return std::sqrt(ohms.front() * ohms.back());
 }
@@ -33,17 +40,20 @@ struct Tried {
 // Span and smaller gap of the pin by solving the whole network for each state: the long way round.
 Tried tried(const model::Divider& divider, model::BranchId fixed, double ohms, const std::vector<double>& sensor) {
   double low = 1, high = 0, least = 1, most = 0;
-  for (const double sign : {0.0, 1.0, -1.0})
+  const std::size_t leakages = divider.whole.leakages.size();
+  for (unsigned signs = 0; signs <= 1U << leakages; ++signs)  // every corner, and at last none of them
     for (const double value : sensor) {
+      const bool none = signs == 1U << leakages;
       std::vector<model::Override> held{{fixed, ohms}, {divider.whole.swept.front().branch, value}};
-      for (std::size_t i = 0; i < divider.whole.leakages.size(); ++i)
-        held.push_back({divider.whole.leakages[i], sign * divider.whole.leakage_amperes[i]});
+      for (std::size_t i = 0; i < leakages && !none; ++i)
+        held.push_back(
+            {divider.whole.leakages[i], ((signs >> i & 1U) != 0 ? 1 : -1) * divider.whole.leakage_amperes[i]});
       const auto volts = network::node_volts(divider.whole.network, held).value();
       const double top = divider.whole.high.valid() ? volts[divider.whole.high.index()] : divider.input.nominal_high;
       const double reading = volts[divider.whole.probe.index()] / top * divider.input.gain;
       low = std::min(low, reading);
       high = std::max(high, reading);
-      if (sign != 0) continue;
+      if (!none) continue;
       least = std::min(least, reading);
       most = std::max(most, reading);
     }
@@ -67,7 +77,7 @@ TEST_CASE("the best resistor of a plain divider is the geometric mean of the sen
   const auto sensor = thermistor();
   for (Made made :
        {advise_test::sensor_below(10e3), advise_test::sensor_above(10e3), advise_test::sensor_below(1.5e6)}) {
-    const auto reach = best_resistor(made.finished(), sensor, 0).value();
+    const auto reach = best_over(made.finished(), sensor, 0).value();
     CHECK(reach.part == "R1");
     CHECK(reach.ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
     const double k = std::sqrt(sensor.front() / sensor.back());
@@ -84,7 +94,7 @@ TEST_CASE("the best resistor of published ranges is their geometric mean") {
        {Range{23e3, 65e3, 38665.2}, Range{10e3, 200e3, 44721.4}, Range{600e3, 4e6, 1549193.3},
         Range{678.417, 336103.2, 15100.26}, Range{3603, 32650, 10846.10}, Range{100, 138.5055, 117.6884}}) {
     Made made = advise_test::sensor_below(2 * r.most);
-    CHECK(best_resistor(made.finished(), std::vector<double>{r.most, r.least}, 0).value().ohms ==
+    CHECK(best_over(made.finished(), std::vector<double>{r.most, r.least}, 0).value().ohms ==
           Approx(r.best).epsilon(2e-6));
   }
 }
@@ -106,8 +116,8 @@ TEST_CASE("a plain divider has both its gaps at their largest where its span is"
   for (Made made : {advise_test::sensor_below(10e3), advise_test::sensor_above(10e3)}) {
     const auto& divider = made.finished();
     const double gap = 1 / (1 + std::sqrt(sensor.front() / sensor.back()));  // 1 - u_hi = u_lo = (1 - span)/2
-    CHECK(best_resistor(divider, sensor, gap).value().ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
-    CHECK_FALSE(best_resistor(divider, sensor, gap + 1e-6).has_value());
+    CHECK(best_over(divider, sensor, gap).value().ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
+    CHECK_FALSE(best_over(divider, sensor, gap + 1e-6).has_value());
   }
 }
 
@@ -118,7 +128,7 @@ TEST_CASE("where the gap limit binds, the best resistor keeps it exactly") {
   for (const double gap_limit : {0.015, 0.01, 0.0}) {
     Made made = advise_test::sensor_below(10e3);
     made.divider.input.nominal_high = 3;
-    const auto reach = best_resistor(made.finished(), sensor, gap_limit).value();
+    const auto reach = best_over(made.finished(), sensor, gap_limit).value();
     CHECK(reach.ohms == Approx(sensor.front() * (1.1 / (1 - gap_limit) - 1)).epsilon(1e-9));
     CHECK(reach.span_use == Approx(1 - gap_limit - 1.1 * sensor.back() / (reach.ohms + sensor.back())).epsilon(1e-9));
   }
@@ -135,7 +145,7 @@ TEST_CASE("leakage in the envelope moves the best resistor to where the gap limi
   // 0.0278.
   CHECK(tried(divider, made.fixed, geometric_mean(sensor), sensor).gap == Approx(0.0282).margin(5e-5));
   const double gap_limit = 0.0288;
-  const auto reach = best_resistor(divider, sensor, gap_limit).value();
+  const auto reach = best_over(divider, sensor, gap_limit).value();
   const auto at = tried(divider, made.fixed, reach.ohms, sensor);
   CHECK(at.gap == Approx(gap_limit).margin(1e-9));
   CHECK(at.span == Approx(reach.span_use).epsilon(1e-9));
@@ -145,7 +155,26 @@ TEST_CASE("leakage in the envelope moves the best resistor to where the gap limi
   CHECK(reach.span_use == Approx(wanted).margin(1e-4));
   // Without the leakage the same limit does not bind.
   made.divider.whole.leakage_amperes = {0};
-  CHECK(best_resistor(divider, sensor, gap_limit).value().ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
+  CHECK(best_over(divider, sensor, gap_limit).value().ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));
+}
+
+TEST_CASE(
+    "leakages with signs of their own hold the best resistor to the gap limit where an end of the range leaks too") {
+  const auto sensor = thermistor();
+  Made made = advise_test::sensor_below(10e3);
+  made.board.resistor(1, 3, 10e3);
+  made.board.resistor(3, 0, 200e3);
+  made.divider.whole.high = node(3);  // 3.143 V: a cold sensor passes it where R1 is too small
+  made.leak(2, 1e-6);
+  made.leak(3, 1e-6);
+  const auto& divider = made.finished();
+  const double gap_limit = 0.02;
+  const auto reach = best_over(divider, sensor, gap_limit).value();
+  const auto at = tried(divider, made.fixed, reach.ohms, {sensor.front(), sensor.back()});
+  CHECK(at.gap == Approx(gap_limit).margin(1e-9));
+  const double wanted = by_trying(divider, made.fixed, 10e3, sensor, gap_limit);
+  CHECK(reach.span_use >= wanted - 1e-12);
+  CHECK(reach.span_use == Approx(wanted).margin(1e-3));
 }
 
 TEST_CASE("an end of the range that is a net is read at that very point") {
@@ -156,10 +185,10 @@ TEST_CASE("an end of the range that is a net is read at that very point") {
   made.sensor = made.element(made.divider.lower, "RT1", 2, 0, 1);
   advise_test::sweep_sensor(made);
   made.divider.whole.high = node(3);
-  const auto reach = best_resistor(made.finished(), sensor, 0).value();
+  const auto reach = best_over(made.finished(), sensor, 0).value();
   CHECK(reach.ohms == Approx(geometric_mean(sensor)).epsilon(1e-6));  // the sag cancels
   made.divider.whole.high = {};
-  CHECK(std::abs(best_resistor(made.finished(), sensor, 0).value().ohms - geometric_mean(sensor)) >
+  CHECK(std::abs(best_over(made.finished(), sensor, 0).value().ohms - geometric_mean(sensor)) >
         100);  // and here it does not
 }
 
@@ -168,7 +197,7 @@ TEST_CASE("of several fixed resistors the one that reaches most is named") {
   Made made = advise_test::sensor_below(200);
   const auto parallel = made.element(made.divider.lower, "R2", 2, 0, 1e6);
   const auto& divider = made.finished();
-  const auto reach = best_resistor(divider, sensor, 0.02).value();
+  const auto reach = best_over(divider, sensor, 0.02).value();
   CHECK(reach.part == "R1");
   const double by_upper = by_trying(divider, made.fixed, 200, sensor, 0.02);
   const double by_parallel = by_trying(divider, parallel, 1e6, sensor, 0.02);
@@ -180,8 +209,8 @@ TEST_CASE("the divider of a supply monitor is set so that the highest supply kee
   Made made = advise_test::with_volts(12);
   made.fixed = made.element(made.divider.upper, "R1", 1, 2, 100e3);
   made.element(made.divider.lower, "R2", 2, 0, 10e3);
-  made.divider.whole.swept = {{made.rail, model::SweptQuantity::volts}};
-  const auto reach = best_resistor(made.finished(), std::vector<double>{9, 12, 15}, 0.02).value();
+  made.divider.whole.swept = {{made.rail, model::SweptQuantity::volts, {}}};
+  const auto reach = best_over(made.finished(), std::vector<double>{9, 12, 15}, 0.02).value();
   CHECK(reach.span_use == Approx(0.98 * (1 - 9.0 / 15)).epsilon(1e-9));
   const double upper = reach.part == "R1" ? reach.ohms : 100e3;
   const double lower = reach.part == "R2" ? reach.ohms : 10e3;
@@ -192,7 +221,7 @@ TEST_CASE("where every reading clips alike the present value stays") {
   Made made = advise_test::sensor_below(10e3);
   made.divider.input.nominal_low = 1.6;
   made.divider.input.nominal_high = 1.7;
-  const auto reach = best_resistor(made.finished(), std::vector<double>{1e6, 100}, -100).value();
+  const auto reach = best_over(made.finished(), std::vector<double>{1e6, 100}, -100).value();
   CHECK(reach.ohms == 10e3);
   CHECK(reach.span_use == 1);
 }
@@ -208,7 +237,7 @@ TEST_CASE("branches that move together are followed point by point") {
     swept[0].values.push_back(10e3 * (1 - i / 100.0));
     swept[1].values.push_back(10e3 * i / 100.0);
   }
-  made.divider.whole.swept = {{top, model::SweptQuantity::ohms}, {bottom, model::SweptQuantity::ohms}};
+  made.divider.whole.swept = {{top, model::SweptQuantity::ohms, {}}, {bottom, model::SweptQuantity::ohms, {}}};
   // At the far end the reading is 10k/(R1 + 10k): by hand, 0.9 at R1 = 10k/9; the other gap is zero.
   const auto reach = best_resistor(made.finished(), swept, -1).value();
   CHECK(reach.ohms == Approx(10).epsilon(1e-6));  // a thousandth of the present: the search's end
@@ -221,13 +250,11 @@ TEST_CASE("branches that move together are followed point by point") {
 TEST_CASE("without a fixed resistor to vary, or without a sweep to follow, there is nothing") {
   const std::vector<double> sensor{1e3, 1e4};
   Made good = advise_test::sensor_below(10e3);
-  CHECK(best_resistor(good.finished(), sensor, 0).has_value());
-  CHECK_FALSE(best_resistor(good.finished(), std::vector<double>{}, 0).has_value());
-  CHECK_FALSE(best_resistor(good.finished(), sensor, 0.6).has_value());
+  CHECK(best_over(good.finished(), sensor, 0).has_value());
+  CHECK_FALSE(best_over(good.finished(), std::vector<double>{}, 0).has_value());
+  CHECK_FALSE(best_over(good.finished(), sensor, 0.6).has_value());
 
   Made residual = advise_test::sensor_below(10e3);
-  residual.divider.whole.swept.front().quantity = model::SweptQuantity::value;
-  CHECK_FALSE(best_resistor(residual.finished(), sensor, 0).has_value());
   const std::vector<model::SweptValues> variable{{residual.sensor, true, sensor}};
   CHECK_FALSE(best_resistor(residual.finished(), variable, 0).has_value());
   const std::vector<model::SweptValues> ohms{{residual.sensor, false, sensor}};
@@ -235,12 +262,10 @@ TEST_CASE("without a fixed resistor to vary, or without a sweep to follow, there
 
   Made nameless = advise_test::sensor_below(10e3);
   nameless.divider.upper.clear();
-  CHECK_FALSE(best_resistor(nameless.finished(), sensor, 0).has_value());
+  CHECK_FALSE(best_over(nameless.finished(), sensor, 0).has_value());
 
   Made jumper = advise_test::sensor_below(0);
-  CHECK_FALSE(best_resistor(jumper.finished(), sensor, 0).has_value());
+  CHECK_FALSE(best_over(jumper.finished(), sensor, 0).has_value());
 
-  Made unswept = advise_test::sensor_below(10e3);
-  unswept.divider.whole.swept.clear();
-  CHECK_FALSE(best_resistor(unswept.finished(), sensor, 0).has_value());
+  CHECK_FALSE(best_resistor(good.finished(), {}, 0).has_value());
 }

@@ -1,4 +1,5 @@
 #include <cmath>
+#include <limits>
 
 #include <catch2/catch.hpp>
 
@@ -161,6 +162,16 @@ TEST_CASE("The slope of an NTC divider comes within 1 % of the exact one at 101 
     const double slope = 3977 / (kelvin * kelvin) * bare[i] * (1 - bare[i]);
     CHECK(*figures(input, points).load_error_measurand == Approx(0.001 / slope).epsilon(0.01));
   }
+}
+
+TEST_CASE("A slope that comes with the points counts before theirs, but where it is no number") {
+  const auto input = converter_input();
+  auto points = solved({0, 1, 2}, {0.1, 0.2, 0.3}, input);
+  for (double& volt : points.nominal.pin) volt += 0.033;
+  points.bare_slope = {0.05, 0.5, 0.5};
+  CHECK(*figures(input, points).load_error_measurand == Approx(0.01 / 0.05).epsilon(1e-9));
+  points.bare_slope = {std::numeric_limits<double>::quiet_NaN(), 0.5, 0.5};
+  CHECK(*figures(input, points).load_error_measurand == Approx(0.01 / 0.1).epsilon(1e-9));
 }
 
 TEST_CASE("The engine gap is the largest difference in LSB, and absent without a closed form") {
