@@ -1,10 +1,26 @@
 // The figures of one input. A figure that does not apply is absent, never zero.
 #pragma once
 
+#include <cstdint>
 #include <optional>
 #include <string>
 
 namespace model {
+
+enum class LoadKind : std::uint8_t {
+  none,
+  part,              // resistors that are no arms
+  devices,           // clamps and other parts that are not linear, all together
+  input_resistance,  // of the converter
+  rail_resistance,
+  leakage,  // all of it
+};
+
+// What bends the reading away from that of the bare divider.
+struct Contributor {
+  LoadKind kind = LoadKind::none;
+  std::string name;  // as reports name it; empty for none
+};
 
 struct Figures {
 #define FIGURE(name, unit, sentence) std::optional<double> name;
@@ -19,7 +35,8 @@ struct Figures {
   std::size_t load_error_point = 0;
   std::size_t load_error_measurand_point = 0;
   std::size_t engine_gap_point = 0;
-  std::string largest_load;  // the contributor that moves the pin most
+  Contributor largest_load;            // what moves the reading most at load_error_point
+  Contributor largest_load_measurand;  // and at load_error_measurand_point
 };
 
 }  // namespace model

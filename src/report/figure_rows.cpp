@@ -95,9 +95,9 @@ void error_rows(Page& page, const model::AuditedInput& input) {
   const model::Figures& figures = input.figures;
   if (known(figures.load_error_lsb)) {
     std::string remark = at_text(input, figures.load_error_point);
-    if (*figures.load_error_lsb > 0 && !figures.largest_load.empty())
+    if (*figures.load_error_lsb > 0 && !figures.largest_load.name.empty())
       remark += fmt::format("{}most of it by {}", remark.empty() ? "" : ", ",
-                            base::printable_short(figures.largest_load, 60));
+                            base::printable_short(figures.largest_load.name, 60));
     figure_row(page, "load error", base::number_text(*figures.load_error_lsb) + " LSB", remark);
   }
   if (known(figures.load_error_measurand))

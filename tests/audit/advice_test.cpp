@@ -50,29 +50,50 @@ TEST_CASE("the source resistance at the pin is the largest of the sweep, sense p
 
 TEST_CASE("what loads the divider most is named") {
   const std::string board = "V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\n";
-  CHECK(figures(board + "R3 A 0 100k\n", converter("\"A\"") + "input_resistance = \"10M\"\n" + sensor).largest_load ==
-        "R3");
-  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + "input_resistance = \"100k\"\n" + sensor).largest_load ==
-        "the input resistance");
-  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + "leakage = \"100uA\"\n" + sensor).largest_load ==
+  CHECK(figures(board + "R3 A 0 100k\n", converter("\"A\"") + "input_resistance = \"10M\"\n" + sensor)
+            .largest_load.name == "R3");
+  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + "input_resistance = \"100k\"\n" + sensor)
+            .largest_load.name == "the input resistance");
+  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + "leakage = \"100uA\"\n" + sensor).largest_load.name ==
         "leakage");
-  CHECK(figures(board + "R3 A 0 10MEG\n", converter("\"A\"") + sensor + "[rail.VCC]\nvolts = 3.3\nohms = 50\n")
-            .largest_load == "the source resistance of a rail");
+  CHECK(figures(board + "R3 A 0 10MEG\n", "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"A\"]\n" + sensor +
+                                              "[rail.VCC]\nvolts = 3.3\nohms = 50\n")
+            .largest_load.name == "the source resistance of a rail");
 }
 
 TEST_CASE("clamps are named together where they load the divider most") {
   const std::string clamped =
       "V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\nR3 A 0 10MEG\nD1 A 0 DZ\nD2 A 0 DZ\n.model DZ D(IS=1e-12)\n";
-  CHECK(figures(clamped, converter("\"A\"") + sensor).largest_load == "D1, D2");
+  CHECK(figures(clamped, converter("\"A\"") + sensor).largest_load.name == "D1, D2");
 }
 
 TEST_CASE("a divider that nothing loads names no load") {
-  CHECK(figures("V1 VCC 0 3.3\nR1 VCC A 1k\nRS A 0 {X}\n", converter("\"A\"") + sensor).largest_load.empty());
+  CHECK(figures("V1 VCC 0 3.3\nR1 VCC A 1k\nRS A 0 {X}\n", converter("\"A\"") + sensor).largest_load.name.empty());
 }
 
 TEST_CASE("a stand-in of a resistor is named as load like any part") {
   CHECK(figures("V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\nXU3 A 0 CHIP\n"
                 "",
                 converter("\"A\"") + sensor + "[part.XU3]\nmodel = \"resistor\"\nohms = \"20k\"\nrole = \"load\"\n")
-            .largest_load == "XU3");
+            .largest_load.name == "XU3");
+}
+
+TEST_CASE("what is ratiometric to the range loads nothing") {
+  // The rail sags by its source resistance, and the range with it: only the input resistance is left.
+  const auto found = figures("R1 VCC T 10k\nRS T 0 {X}\nR3 T A 20k\nR9 VCC 0 1k\n",
+                             "[rail.VCC]\nvolts = 5\nohms = 50\n[converter.ADC]\nbits = 16\nhigh = \"VCC\"\ninputs = "
+                             "[\"A\"]\ninput_resistance = \"5M\"\n" +
+                                 sensor);
+  CHECK(found.largest_load.kind == model::LoadKind::input_resistance);
+  CHECK(found.largest_load_measurand.kind == model::LoadKind::input_resistance);
+}
+
+TEST_CASE("a rail that sags under the range alone is named before leakage that moves less") {
+  // The range's rail gives 3.3 V x 2k/2.1k = 3.143 V: 5 % of the reading. 1 uA through at most 10k||9k is 4.7 mV.
+  const auto found = figures("V1 VCC 0 5\nR1 VCC A 10k\nRS A 0 {X}\nR3 P3 0 2k\n",
+                             "[rail.P3]\nvolts = 3.3\nohms = 100\n[converter.ADC]\nbits = 12\nhigh = "
+                             "\"P3\"\ninputs = [\"A\"]\nleakage = \"1uA\"\n" +
+                                 sensor);
+  // The sag is as much R3's as the rail's: without either there is none.
+  CHECK((found.largest_load.kind == model::LoadKind::rail_resistance || found.largest_load.name == "R3"));
 }

@@ -7,6 +7,7 @@ using fixtures::accurate_to;
 using fixtures::findings_of;
 using fixtures::set_limit;
 using fixtures::sound_input;
+using model::LoadKind;
 using model::RuleId;
 
 namespace {
@@ -17,8 +18,8 @@ model::AuditedInput loaded(double lsb, double measurand) {
   input.figures.load_error_point = 0;
   input.figures.load_error_measurand = measurand;
   input.figures.load_error_measurand_point = 2;
-  input.figures.largest_load = "R9";
-  for (double& volt : input.sweep->bare_volts) volt += 0.01;
+  input.figures.largest_load = {LoadKind::part, "R9"};
+  input.figures.largest_load_measurand = {LoadKind::part, "R9"};
   return input;
 }
 
@@ -105,13 +106,36 @@ TEST_CASE("load-error: where the error has no size in the measurand it is judged
 
 TEST_CASE("load-error: where leakage leads, the resistance before the pin is what would help") {
   auto input = loaded(20, 0.8);
-  input.figures.largest_load = "the leakage of U1";
+  input.figures.largest_load = {LoadKind::leakage, "leakage"};
   input.figures.pin_source_ohms = 105e3;
-  for (double& volt : input.sweep->pin_high) volt += 0.02;
-  for (double& volt : input.sweep->pin_low) volt -= 0.02;
-  CHECK(
-      findings_of(RuleId::load_error, input).at(0).message ==
-      "what loads the divider bends the reading by up to 20 LSB, at -40 degC, where 1 LSB is the most accepted; the "
-      "leakage of U1 contributes most; less resistance between the arms and the pin, or less leakage, lessens it (the "
-      "pin sees up to 105 kohm)");
+  CHECK(findings_of(RuleId::load_error, input).at(0).message ==
+        "what loads the divider bends the reading by up to 20 LSB, at -40 degC, where 1 LSB is the most accepted; "
+        "leakage contributes most; less resistance between the arms and the pin, or less leakage, lessens it (the "
+        "pin sees up to 105 kohm)");
+}
+
+TEST_CASE("load-error: what would help follows what is named") {
+  auto input = loaded(20, 0.8);
+  const auto message = [&](LoadKind kind, const char* name) {
+    input.figures.largest_load = {kind, name};
+    return findings_of(RuleId::load_error, input).at(0).message;
+  };
+  CHECK(message(LoadKind::rail_resistance, "the source resistance of a rail")
+            .ends_with("the source resistance of a rail contributes most; a stiffer rail, less current out of it, or a "
+                       "range that ends on that rail lessens it"));
+  CHECK(message(LoadKind::input_resistance, "the input resistance")
+            .ends_with("the input resistance contributes most; less resistance in the arms and before the pin, or a "
+                       "buffer, lessens it"));
+  CHECK(message(LoadKind::devices, "D1, D2")
+            .ends_with("D1, D2 contributes most; less resistance in the arms and before the pin, or parts that conduct "
+                       "less within the range, lessens it"));
+}
+
+TEST_CASE("load-error: the contributor is that of the point and unit that the sentence speaks of") {
+  const auto sensor = accurate_to(2);
+  auto input = loaded(20, 0.8);
+  input.figures.largest_load = {LoadKind::leakage, "leakage"};
+  CHECK(findings_of(RuleId::load_error, input, &sensor).at(0).message.find("; R9 contributes most") !=
+        std::string::npos);
+  CHECK(findings_of(RuleId::load_error, input).at(0).message.find("; leakage contributes most") != std::string::npos);
 }

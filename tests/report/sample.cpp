@@ -84,7 +84,7 @@ model::AuditedInput good() {
   figures.gap_high = 0.037;
   figures.load_error_lsb = 7.03;
   figures.load_error_measurand = 0.231;
-  figures.largest_load = "the leakage of ADC_AIR";
+  figures.largest_load.name = "the leakage of ADC_AIR";
   figures.engine_gap_lsb = 0.0;
   figures.pin_source_ohms = 10610;
   return out;

@@ -17,6 +17,7 @@ struct Ruler {
   std::size_t point = 0;
   std::string unit;
   std::string reason;  // in brackets behind the limit; empty for a declared limit
+  model::Contributor largest;
 };
 
 // A declared limit is in LSB. Else a quarter of the declared accuracy, in the measurand; else the larger of 1 LSB and
@@ -27,33 +28,45 @@ std::optional<Ruler> ruler_of(const InputContext& context) {
   const auto declared = declared_limit(input, model::RuleId::load_error);
   const bool accuracy = context.sensor != nullptr && context.sensor->accuracy;
   if (!declared && accuracy && figures.load_error_measurand)
-    return Ruler{*figures.load_error_measurand, context.sensor->accuracy->value / 4, figures.load_error_measurand_point,
-                 context.unit, " (a quarter of the declared accuracy)"};
+    return Ruler{*figures.load_error_measurand,           context.sensor->accuracy->value / 4,
+                 figures.load_error_measurand_point,      context.unit,
+                 " (a quarter of the declared accuracy)", figures.largest_load_measurand};
   if (!figures.load_error_lsb) return std::nullopt;
   const double default_limit = std::max(1.0, std::ldexp(1.0, input.bits) / 4096);
-  return Ruler{*figures.load_error_lsb, declared.value_or(default_limit), figures.load_error_point, "LSB",
-               default_limit > 1 && !declared ? " (1/4096 of the range)" : ""};
+  return Ruler{*figures.load_error_lsb,
+               declared.value_or(default_limit),
+               figures.load_error_point,
+               "LSB",
+               default_limit > 1 && !declared ? " (1/4096 of the range)" : "",
+               figures.largest_load};
 }
 
-// Whether leakage alone moves the pin further at the point than all the rest of the load does.
-bool leakage_leads(const model::Sweep& sweep, std::size_t i) {
-  const double leaked =
-      std::max(std::fabs(sweep.pin_high[i] - sweep.pin_volts[i]), std::fabs(sweep.pin_low[i] - sweep.pin_volts[i]));
-  return leaked > std::fabs(sweep.pin_volts[i] - sweep.bare_volts[i]);
+// What lessens an error of this kind.
+std::string remedy(model::LoadKind kind, const model::Figures& figures) {
+  switch (kind) {
+    case model::LoadKind::leakage:
+      return "less resistance between the arms and the pin, or less leakage, lessens it" +
+             (figures.pin_source_ohms
+                  ? fmt::format(" (the pin sees up to {})", base::si_text(*figures.pin_source_ohms, "ohm", 3))
+                  : "");
+    case model::LoadKind::input_resistance:
+      return "less resistance in the arms and before the pin, or a buffer, lessens it";
+    case model::LoadKind::rail_resistance:
+      return "a stiffer rail, less current out of it, or a range that ends on that rail lessens it";
+    case model::LoadKind::devices:
+      return "less resistance in the arms and before the pin, or parts that conduct less within the range, lessens it";
+    case model::LoadKind::part:
+    case model::LoadKind::none:
+      break;
+  }
+  return "a lighter load, less resistance in the arms or a buffer lessens it (or role = \"arm\", where firmware "
+         "reckons "
+         "with the part)";
 }
 
-std::string help_text(const InputContext& context, std::size_t point) {
-  const model::Figures& figures = context.input.figures;
-  const std::string largest = base::printable_short(figures.largest_load);
-  std::string text = largest.empty() ? "" : fmt::format("; {} contributes most", largest);
-  if (!leakage_leads(*context.input.sweep, point))
-    return text +
-           "; a lighter load, less resistance in the arms or a buffer lessens it (or role = \"arm\", where firmware "
-           "reckons with the part)";
-  text += "; less resistance between the arms and the pin, or less leakage, lessens it";
-  if (figures.pin_source_ohms)
-    text += fmt::format(" (the pin sees up to {})", base::si_text(*figures.pin_source_ohms, "ohm", 3));
-  return text;
+std::string help_text(const model::Figures& figures, const model::Contributor& largest) {
+  const std::string name = base::printable_short(largest.name);
+  return (name.empty() ? "" : fmt::format("; {} contributes most", name)) + "; " + remedy(largest.kind, figures);
 }
 
 void run(const InputContext& context, Findings& out) {
@@ -69,7 +82,7 @@ void run(const InputContext& context, Findings& out) {
   finding.message =
       fmt::format("what loads the divider bends the reading by up to {}{}, at {}, where {}{} is the most accepted{}{}",
                   texts.value, unit, measurand_text(*finding.at, context.unit), texts.limit, unit, ruler->reason,
-                  help_text(context, ruler->point));
+                  help_text(context.input.figures, ruler->largest));
   out.add(std::move(finding));
 }
 
