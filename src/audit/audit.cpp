@@ -16,16 +16,46 @@
 namespace audit {
 namespace {
 
+std::string place_text(const Reading& reading, source::Place place) {
+  return fmt::format("{}:{}", reading.sources[place.source].name, reading.sources.position(place).line);
+}
+
+// Cards with errors, each with its reason. Those that a header without its end has taken are counted at the header.
+std::vector<judge::BoardFacts::Unreadable> unreadable_cards(const Reading& reading) {
+  const model::Netlist& netlist = reading.netlist;
+  std::vector<judge::BoardFacts::Unreadable> cards;
+  std::map<model::CardId, std::size_t> told;  // by card, where in `cards`
+  for (std::uint32_t i = 0; i < netlist.cards.size(); ++i) {
+    const model::CardId id{i};
+    if (netlist.cards[i].fate != model::CardFate::error) continue;
+    const auto fault = netlist.faults.find(id);
+    const model::CardId cause = fault == netlist.faults.end() ? model::CardId{} : fault->second.cause;
+    const auto header = told.find(cause);
+    if (header != told.end() && fault->second.reason.empty()) {
+      ++cards[header->second].taken;
+      continue;
+    }
+    told.emplace(id, cards.size());
+    auto& card = cards.emplace_back();
+    card.card = card.where = netlist.span(id);
+    if (fault == netlist.faults.end()) continue;
+    card.reason = fault->second.reason;
+    if (cause.valid())
+      card.reason += fmt::format(" ({})", place_text(reading, netlist.span(cause).begin));
+    else
+      card.where = fault->second.where;
+  }
+  return cards;
+}
+
 // The facts of a board that its own rules judge.
 judge::BoardFacts facts_of(const Reading& reading, const model::Division& division) {
   judge::BoardFacts facts;
   facts.netlist = {{reading.netlist.root, 0}, 0};
   facts.levels = reading.sheet.levels;
-  for (std::uint32_t i = 0; i < reading.netlist.cards.size(); ++i)
-    if (reading.netlist.cards[i].fate == model::CardFate::error)
-      facts.unreadable.push_back(reading.netlist.span(model::CardId{i}));
+  facts.unreadable = unreadable_cards(reading);
   for (const auto& missing : reading.netlist.missing_includes)
-    facts.missing_includes.push_back({missing.where, std::string(reading.sources.text(missing.where))});
+    facts.missing_includes.push_back({missing.where, missing.what});
   for (const auto& assumption : division.assumptions) facts.assumptions.push_back(assumption.text);
   std::unordered_set<std::uint32_t> told;
   for (const auto& divider : division.dividers)
@@ -58,6 +88,9 @@ bool worth_auditing(Reading& reading, model::BoardReport& report) {
     report.done_in_whole = false;  // each error has been said at its place
     return false;
   }
+  for (const std::string& cut : {reading.netlist.cut, reading.circuit.cut})
+    if (!cut.empty())
+      return complain(reading, report, cut + ", so a part of the board is missing and nothing is audited"), false;
   const auto& count = report.reading;
   if (count.cards == 0) return complain(reading, report, "the netlist has no cards"), false;
   if (count.error == count.cards) return complain(reading, report, "no card of the netlist could be read"), false;

@@ -60,17 +60,9 @@ class OneInput {
 
   void note_obstacles() {
     found_.unmodelled = find_touches(graph_, around_);
-    for (const auto& touch : found_.unmodelled)
-      if (!touch.taken_as_open)
-        refuse(fmt::format(
-            "{} on net {} has no model: declare a stand-in for it, for example [part.\"{}\"] model = \"open\"",
-            printable_short(graph_.names().text(touch.element)), printable_short(graph_.names().text(touch.net)),
-            printable_short(graph_.names().text(touch.element))));
-    if (const model::CardId card = request_.broken.touching(graph_, around_, request_.netlist); card.valid()) {
-      const source::Place place = request_.netlist.span(card).begin;
-      refuse(fmt::format("a card that could not be read names a net of its network ({}:{})",
-                         printable_short(request_.sources[place.source].name), request_.sources.position(place).line));
-    }
+    for (std::string& why :
+         obstacles(graph_, around_, found_.unmodelled, request_.broken, request_.netlist, request_.sources))
+      refuse(std::move(why));
     if (around_.measures_rail_current)
       refuse("a source in its network follows the current of a source that makes a rail");
     for (const Node node : around_.rails)

@@ -3,8 +3,11 @@
 #include <algorithm>
 #include <array>
 #include <cctype>
+#include <fmt/format.h>
+#include <set>
 
 #include "base/names.hpp"
+#include "base/text.hpp"
 
 namespace divide {
 namespace {
@@ -29,6 +32,51 @@ void add_words(std::string_view text, std::string_view ends, std::unordered_set<
     words.insert(base::folded(text.substr(begin, end - begin)));
     at = end;
   }
+}
+
+std::string parts_sentence(const std::vector<std::string>& parts) {
+  constexpr std::size_t most = 6;
+  std::string list;
+  for (std::size_t i = 0; i < std::min(parts.size(), most); ++i) list += (i == 0 ? "" : ", ") + parts[i];
+  if (parts.size() > most) list += fmt::format(" and {} more", parts.size() - most);
+  const bool one = parts.size() == 1;
+  return fmt::format("{} {} no model here and {} in the way: declare a stand-in for {}", list, one ? "has" : "have",
+                     one ? "is" : "are", one ? "it" : "each");
+}
+
+std::string place_text(const source::Sources& sources, source::Place place) {
+  return fmt::format("{}:{}", base::printable_short(sources[place.source].name), sources.position(place).line);
+}
+
+// A sentence for each card, and one for all that a header without its end has taken.
+std::vector<std::string> card_sentences(const std::set<model::CardId>& cards, const model::Netlist& netlist,
+                                        const source::Sources& sources) {
+  constexpr std::size_t most = 6;
+  std::vector<std::string> sentences;
+  std::set<model::CardId> causes;
+  std::size_t more = 0;
+  for (const model::CardId card : cards) {
+    const auto own = netlist.faults.find(card);
+    const model::CardFault fault = own == netlist.faults.end() ? model::CardFault{} : own->second;
+    const bool taken = fault.reason.empty() && fault.cause.valid();
+    if (taken && !causes.insert(fault.cause).second) continue;
+    if (sentences.size() == most) {
+      ++more;
+      continue;
+    }
+    std::string text = fmt::format("the card at {} could not be read and names a net of its network",
+                                   place_text(sources, netlist.span(card).begin));
+    std::string reason = fault.reason;
+    if (taken) {
+      const auto cause = netlist.faults.find(fault.cause);
+      if (cause != netlist.faults.end()) reason = cause->second.reason;
+    }
+    if (!reason.empty()) text += ": " + reason;
+    if (fault.cause.valid()) text += fmt::format(" ({})", place_text(sources, netlist.span(fault.cause).begin));
+    sentences.push_back(std::move(text));
+  }
+  if (more > 0) sentences.push_back(fmt::format("{} more cards of its network could not be read", more));
+  return sentences;
 }
 
 }  // namespace
@@ -73,8 +121,8 @@ BrokenCards::BrokenCards(const model::Netlist& netlist, const source::Sources& s
   }
 }
 
-model::CardId BrokenCards::touching(const Graph& graph, const Surroundings& around,
-                                    const model::Netlist& netlist) const {
+std::vector<model::CardId> BrokenCards::touching(const Graph& graph, const Surroundings& around,
+                                                 const model::Netlist& netlist) const {
   if (cards_.empty()) return {};
   std::unordered_set<std::string> wanted;
   const std::unordered_set<Node> nodes(around.nodes.begin(), around.nodes.end());
@@ -90,11 +138,31 @@ model::CardId BrokenCards::touching(const Graph& graph, const Surroundings& arou
         if (nodes.contains(graph.nodes().of(graph.circuit().pin(instance, i))))
           wanted.insert(base::folded(names_.text(netlist.words[scope.ports.first + i].name)));
     }
+  std::vector<model::CardId> found;
   for (const Card& card : cards_)
-    if (std::any_of(card.words.begin(), card.words.end(),
-                    [&](const std::string& word) { return wanted.contains(word); }))
-      return card.id;
-  return {};
+    if (std::any_of(wanted.begin(), wanted.end(), [&](const std::string& word) { return card.words.contains(word); }))
+      found.push_back(card.id);
+  return found;
+}
+
+std::vector<std::string> obstacles(const Graph& graph, const Surroundings& around,
+                                   const std::vector<model::UnmodelledTouch>& touches, const BrokenCards& broken,
+                                   const model::Netlist& netlist, const source::Sources& sources) {
+  std::vector<std::string> parts;
+  std::set<model::CardId> cards;
+  for (const auto& touch : touches) {
+    const model::Element& element = graph.circuit().elements[touch.element.index()];
+    if (std::get<model::Unmodelled>(element.part).why == model::Unmodelled::Why::broken_card)
+      cards.insert(element.card);
+    else if (!touch.taken_as_open)
+      parts.push_back(base::printable_short(graph.names().text(touch.element)));
+  }
+  std::vector<std::string> sentences;
+  if (!parts.empty()) sentences.push_back(parts_sentence(parts));
+  for (const model::CardId card : broken.touching(graph, around, netlist)) cards.insert(card);
+  const auto told = card_sentences(cards, netlist, sources);
+  sentences.insert(sentences.end(), told.begin(), told.end());
+  return sentences;
 }
 
 }  // namespace divide

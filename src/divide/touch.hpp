@@ -27,12 +27,10 @@ class BrokenCards {
  public:
   BrokenCards(const model::Netlist& netlist, const source::Sources& sources, const base::NameTable& names);
 
-  // The first card that names a net of the network: the net by its own name, by its name inside its subcircuit, or by
-  // the port of an instance that is joined to it. None: an invalid id.
-  [[nodiscard]] model::CardId touching(const Graph& graph, const Surroundings& around,
-                                       const model::Netlist& netlist) const;
-
-  [[nodiscard]] bool empty() const { return cards_.empty(); }
+  // The cards that name a net of the network, in order: the net by its own name, by its name inside its subcircuit, or
+  // by the port of an instance that is joined to it.
+  [[nodiscard]] std::vector<model::CardId> touching(const Graph& graph, const Surroundings& around,
+                                                    const model::Netlist& netlist) const;
 
  private:
   struct Card {
@@ -42,5 +40,12 @@ class BrokenCards {
   std::vector<Card> cards_;
   const base::NameTable& names_;
 };
+
+// Why parts without a model (`touches`) and cards that could not be read keep an input from being audited: a sentence
+// for all such parts, and one for each card (or for all that one fault has taken), with its place and reason.
+[[nodiscard]] std::vector<std::string> obstacles(const Graph& graph, const Surroundings& around,
+                                                 const std::vector<model::UnmodelledTouch>& touches,
+                                                 const BrokenCards& broken, const model::Netlist& netlist,
+                                                 const source::Sources& sources);
 
 }  // namespace divide

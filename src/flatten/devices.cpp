@@ -58,7 +58,11 @@ Elements::Outcome Elements::device(const Frame& frame, const model::ElementCard&
   const FoundModel found = wanted.valid() ? work_.library.model(frame.scope, wanted) : FoundModel{};
   if (found.card == nullptr) return Unmodelled{Why::no_model, wanted};
   const UsableModel& usable = models_.use(frame, found);
-  if (usable.why == UsableModel::Why::failed) return std::nullopt;
+  if (usable.why == UsableModel::Why::failed) {
+    work_.blame(card.card, work_.place(card.card, card.reference),
+                fmt::format("model {} could not be read", work_.shown(wanted)), found.card->card);
+    return std::nullopt;
+  }
   if (usable.why == UsableModel::Why::unsupported) return Unmodelled{Why::unsupported, wanted};
   if (!is_of(card.letter, work_.circuit.models[usable.id.index()].type)) return Unmodelled{Why::no_model, wanted};
   const DeviceShape& shape = shape_of(card.letter);

@@ -54,14 +54,20 @@ void Elements::add(const Frame& frame, const model::ElementCard& card) {
     return;
   }
   Outcome part = part_of(frame, card);
-  if (!part) return add_unmodelled(frame, card, {Why::unsupported, card.reference.name}, true);
+  if (!part) return add_broken(frame, card);
   if (std::holds_alternative<Unmodelled>(*part)) work_.settle(card.card, CardFate::unmodelled);
   place(frame, card, *part);
+  if (std::holds_alternative<model::VoltageSource>(*part)) add_series_resistance(frame, card);
 }
 
-void Elements::add_unmodelled(const Frame& frame, const model::ElementCard& card, Unmodelled part, bool failed) {
-  work_.settle(card.card, failed ? CardFate::error : CardFate::unmodelled);
+void Elements::add_unmodelled(const Frame& frame, const model::ElementCard& card, Unmodelled part) {
+  work_.settle(card.card, CardFate::unmodelled);
   place(frame, card, part);
+}
+
+void Elements::add_broken(const Frame& frame, const model::ElementCard& card) {
+  work_.blame(card.card, work_.netlist.span(card.card), "what it rests on could not be read");
+  place(frame, card, Unmodelled{Why::broken_card, card.reference.name});
 }
 
 Elements::Outcome Elements::part_of(const Frame& frame, const model::ElementCard& card) {
@@ -97,7 +103,8 @@ void Elements::finish(const Frame& frame, std::size_t older) {
     model::Element& element = work_.circuit.elements[current_.index()];
     const Outcome part = source_part(frame, *waiting.card, element);
     if (!part) {
-      work_.settle(element.card, CardFate::error);
+      work_.blame(element.card, work_.netlist.span(element.card), "what it rests on could not be read");
+      element.part = Unmodelled{Why::broken_card, waiting.card->reference.name};
       continue;
     }
     if (std::holds_alternative<Unmodelled>(*part)) work_.settle(element.card, CardFate::unmodelled);

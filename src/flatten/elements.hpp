@@ -23,8 +23,11 @@ class Elements {
   // Gives the sources of a frame their parts: those that wait, but for the first `older`, which are its callers'.
   void finish(const Frame& frame, std::size_t older);
 
-  // Adds a card's element without a model. `failed`: the card has an error, which has been said.
-  void add_unmodelled(const Frame& frame, const model::ElementCard& card, model::Unmodelled part, bool failed = false);
+  // Adds a card's element without a model.
+  void add_unmodelled(const Frame& frame, const model::ElementCard& card, model::Unmodelled part);
+
+  // Likewise where the card, or one that it rests on, has an error, which has been said.
+  void add_broken(const Frame& frame, const model::ElementCard& card);
 
   // The net of a card's node.
   [[nodiscard]] model::NetId net(const Frame& frame, const model::ElementCard& card, std::uint32_t node);
@@ -50,9 +53,17 @@ class Elements {
   std::optional<double> fixed(const Frame& frame, const model::Assignment& assignment, model::CardId card);
   std::optional<double> tolerance(const Frame& frame, const model::ElementCard& card);
   [[nodiscard]] double spread_of(const model::ModelCard& card) const;
+  // A resistance that a key of the card gives: nothing where it gives none, or 0.
+  struct KeyOhms {
+    std::optional<model::Number> ohms;
+    bool failed = false;  // the user has been told
+  };
+  KeyOhms key_ohms(const Frame& frame, const model::ElementCard& card, std::string_view key);
+  // Rser of the voltage source that was placed last: a resistor of its own, on a net of its own before the plus pin.
+  void add_series_resistance(const Frame& frame, const model::ElementCard& card);
   std::optional<double> fixed_parameter(const Frame& frame, const model::ElementCard& card, std::string_view key);
   void detail(const Frame& frame, const model::ElementCard& card, const Quantity& quantity, const FoundModel& model);
-  [[nodiscard]] model::Unmodelled without_value(const model::ElementCard& card, base::NameId word) const;
+  model::Unmodelled without_value(const Frame& frame, const model::ElementCard& card, base::NameId word);
 
   // devices.cpp
   Outcome device(const Frame& frame, const model::ElementCard& card);

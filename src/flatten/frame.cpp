@@ -30,4 +30,15 @@ void Work::settle(model::CardId card, model::CardFate fate) {
   if (badness(fate) > badness(record.fate)) record.fate = fate;
 }
 
+void Work::blame(model::CardId card, source::Span where, std::string reason, model::CardId cause) {
+  settle(card, model::CardFate::error);
+  netlist.faults.try_emplace(card, model::CardFault{where, std::move(reason), cause});
+}
+
+void Work::fail(ProblemKind kind, model::CardId card, source::Span where, model::InstanceId instance,
+                std::string message) {
+  blame(card, where, message);
+  problems.say(kind, base::Level::error, where, instance, std::move(message));
+}
+
 }  // namespace flatten

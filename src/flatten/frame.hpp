@@ -99,6 +99,13 @@ struct Work {
   // Gives a card its fate; of several instances the worst one counts.
   void settle(model::CardId card, model::CardFate fate);
 
+  // Gives a card the fate error; of several reasons the first stays. `cause` is the card that is at fault, where that
+  // is another.
+  void blame(model::CardId card, source::Span where, std::string reason, model::CardId cause = {});
+
+  // Says an error of a card and blames it for that.
+  void fail(ProblemKind kind, model::CardId card, source::Span where, model::InstanceId instance, std::string message);
+
  private:
   std::string full_;
 };

@@ -33,8 +33,9 @@ void Instances::expand(Frame& frame) {
   const std::size_t older = elements_.waiting();
   for (const model::ElementCard& card : work_.netlist.scopes[frame.scope.index()].elements) {
     if (!fits(1)) {
-      refuse(frame, card, ProblemKind::limit,
-             fmt::format("the flat circuit has more elements than the limit elements = {}", work_.limits.elements));
+      work_.circuit.cut =
+          fmt::format("the flat circuit has more elements than the limit elements = {}", work_.limits.elements);
+      refuse(frame, card, ProblemKind::limit, work_.circuit.cut);
       break;
     }
     if (!duplicate_.empty() && duplicate_[card.card.index()]) {
@@ -53,8 +54,8 @@ bool Instances::fits(std::uint64_t more) const {
 }
 
 void Instances::refuse(const Frame& caller, const model::ElementCard& card, ProblemKind kind, std::string message) {
-  work_.problems.say(kind, base::Level::error, work_.netlist.span(card.card), caller.instance, std::move(message));
-  elements_.add_unmodelled(caller, card, {Why::unsupported, card.reference.name}, true);
+  work_.fail(kind, card.card, work_.netlist.span(card.card), caller.instance, std::move(message));
+  elements_.add_broken(caller, card);
 }
 
 // Names are looked up in a set of bits, which is cleared by going through them again.
@@ -110,6 +111,11 @@ void Instances::instantiate(const Frame& caller, const model::ElementCard& card)
   const ScopeId scope =
       card.reference.name.valid() ? work_.library.subcircuit(caller.scope, card.reference.name) : ScopeId{};
   if (!scope.valid()) return elements_.add_unmodelled(caller, card, {Why::missing_subcircuit, card.reference.name});
+  if (const model::Scope& wanted = work_.netlist.scopes[scope.index()]; wanted.broken) {
+    work_.blame(card.card, work_.place(card.card, card.reference),
+                fmt::format("subcircuit {} could not be read", work_.shown(card.reference.name)), wanted.card);
+    return elements_.add_broken(caller, card);
+  }
   if (!may_expand(caller, card, scope)) return;
 
   model::Circuit& circuit = work_.circuit;
@@ -167,9 +173,8 @@ void Instances::check_arguments(const Frame& frame) {
     missing += (missing.empty() ? "" : ", ") + work_.shown(slots[i].card->name.name);
   }
   if (missing.empty()) return;
-  work_.settle(card.card, model::CardFate::error);
-  work_.problems.say(
-      ProblemKind::missing_argument, base::Level::error, work_.netlist.span(card.card), frame.caller->instance,
+  work_.fail(
+      ProblemKind::missing_argument, card.card, work_.netlist.span(card.card), frame.caller->instance,
       fmt::format("{} gives no value for {}, which subcircuit {} has no default for", name, missing, subcircuit));
 }
 

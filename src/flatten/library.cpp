@@ -23,9 +23,15 @@ Library::Library(const model::Netlist& netlist)
   for (std::size_t i = 0; i < netlist.scopes.size(); ++i) {
     const ScopeId id{static_cast<std::uint32_t>(i)};
     const model::Scope& scope = netlist.scopes[i];
-    for (const ScopeId inner : scope.scopes)
-      subcircuits_.try_emplace(key(id, netlist.scopes[inner.index()].name), inner);
-    for (const model::ModelCard& card : scope.models) models_.try_emplace(key(id, card.name), FoundModel{&card, id});
+    // Of several of one name the first counts, as in SPICE; one that is broken makes them all so.
+    for (const ScopeId inner : scope.scopes) {
+      const auto [at, is_new] = subcircuits_.try_emplace(key(id, netlist.scopes[inner.index()].name), inner);
+      if (!is_new && netlist.scopes[inner.index()].broken) at->second = inner;
+    }
+    for (const model::ModelCard& card : scope.models) {
+      const auto [at, is_new] = models_.try_emplace(key(id, card.name), FoundModel{&card, id});
+      if (!is_new && card.broken) at->second.card = &card;
+    }
     add_parameters(id);
   }
 }
@@ -37,7 +43,7 @@ void Library::add_parameters(ScopeId id) {
     const auto [at, is_new] = parameters_.try_emplace(key(id, card.name.name), slots.size());
     if (is_new)
       slots.push_back({&card, is_default});
-    else if (slots[at->second].is_default == is_default)
+    else if (slots[at->second].is_default == is_default && !slots[at->second].card->broken)
       slots[at->second].card = &card;
   };
   for (const model::ParameterCard& card : scope.defaults) add(card, true);

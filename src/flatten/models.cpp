@@ -25,6 +25,7 @@ const Frame& Models::owner(const Frame& frame, model::ScopeId scope) {
 }
 
 bool Models::is_known(const model::ModelCard& card) const {
+  if (card.broken) return true;  // an error is its fate already
   constexpr std::array<std::string_view, 6> passive{"r", "res", "c", "cap", "l", "ind"};
   const std::string_view type = work_.names.text(card.type);
   return is_model_type(type) || std::any_of(passive.begin(), passive.end(),
@@ -60,6 +61,10 @@ int Models::level_of(const Frame& frame, const model::ModelCard& card) {
 
 UsableModel Models::make(const Frame& frame, const model::ModelCard& card) {
   UsableModel model;
+  if (card.broken) {
+    model.why = UsableModel::Why::failed;
+    return model;
+  }
   const ModelType* const type = model_type(work_.names.text(card.type), level_of(frame, card));
   if (type == nullptr) {
     work_.settle(card.card, model::CardFate::unmodelled);

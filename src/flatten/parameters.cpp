@@ -62,9 +62,7 @@ std::optional<Folded> Parameters::fold(const Frame& frame, ExpressionId tree, mo
                                           work_.limits.expression_depth);
   if (const auto* number = std::get_if<model::Number>(&outcome)) return Folded{*number, odd_};
   const auto& trouble = std::get<expression::Trouble>(outcome);
-  if (!quiet && !trouble.message.empty())
-    work_.problems.say(ProblemKind::value, base::Level::error, work_.place(card, trouble.offset), frame.instance,
-                       trouble.message);
+  if (!quiet) blame(frame, card, work_.place(card, trouble.offset), trouble.message);
   return std::nullopt;
 }
 
@@ -77,10 +75,15 @@ std::optional<Folded> Parameters::value(const Frame& frame, base::NameId name, m
   settle(find(&frame, name));
   const auto found = lookup(asking, name);
   if (const auto* number = std::get_if<model::Number>(&found)) return Folded{*number, odd_};
-  const auto& message = std::get<std::string>(found);
-  if (!quiet && !message.empty())
-    work_.problems.say(ProblemKind::value, base::Level::error, where, frame.instance, message);
+  if (!quiet) blame(frame, card, where, std::get<std::string>(found));
   return std::nullopt;
+}
+
+// A card whose value cannot be had. Without a message a parameter is at fault, and has been told at its own card.
+void Parameters::blame(const Frame& frame, model::CardId card, source::Span where, std::string message) {
+  if (!message.empty()) return work_.fail(ProblemKind::value, card, where, frame.instance, std::move(message));
+  work_.blame(card, where, fmt::format("it needs parameter {}, which could not be read", work_.shown(failed_)),
+              failed_card_);
 }
 
 void Parameters::check_all(const Frame& frame) {
@@ -118,7 +121,8 @@ Parameters::Definition Parameters::definition(const Frame& frame, std::size_t sl
     }
   }
   const base::NameId outer = own.is_default ? own.card->name.name : base::NameId{};
-  return {&own.card->value, &frame, own.card->card, work_.place(own.card->card, own.card->name), outer};
+  return {&own.card->value, &frame, own.card->card, work_.place(own.card->card, own.card->name), outer,
+          own.card->broken};
 }
 
 FoundParameter Parameters::seen(const Definition& definition, base::NameId name) const {
@@ -201,6 +205,7 @@ void Parameters::work_out(const Asked& asked) {
     return;
   }
   const Definition own = definition(*asked.frame, asked.slot);
+  if (own.broken) return fail(now, own, {}, own.where);
   std::visit(base::overloaded{
                  [&](std::monostate) {
                    fail(now, own, fmt::format("parameter {} has no value", work_.shown(name_of(asked))), own.where);
@@ -245,6 +250,7 @@ void Parameters::work_out_word(ParameterState& now, const Definition& own, base:
 void Parameters::fail(ParameterState& now, const Definition& own, std::string message, source::Span where) {
   now.status = Status::failed;
   now.told = message.empty();
+  if (message.empty() && !own.broken && !quiet_) blame(*own.frame, own.card, where, {});
   now.failure = std::move(message);
   now.where = where;
   now.card = own.card;
@@ -254,8 +260,8 @@ void Parameters::fail(ParameterState& now, const Definition& own, std::string me
 // A failure of a parameter is told at its own card, and only when something needs it.
 void Parameters::tell(ParameterState& now) {
   if (now.status != Status::failed || quiet_) return;
-  work_.settle(now.card, model::CardFate::error);
-  if (!now.told) work_.problems.say(ProblemKind::parameter, base::Level::error, now.where, now.instance, now.failure);
+  if (!now.told) work_.fail(ProblemKind::parameter, now.card, now.where, now.instance, now.failure);
+  work_.blame(now.card, now.where, "it needs a parameter that could not be read");
   now.told = true;
 }
 
@@ -266,6 +272,8 @@ std::variant<model::Number, std::string> Parameters::lookup(const Definition& as
   odd_ = odd_ || now.odd;
   if (now.status == Status::done) return now.number;
   tell(now);
+  failed_ = name;
+  failed_card_ = now.card;
   return std::string();
 }
 

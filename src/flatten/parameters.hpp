@@ -62,7 +62,8 @@ class Parameters {
     const Frame* frame = nullptr;  // whose parameters its expression sees
     model::CardId card;
     source::Span where;
-    base::NameId outer;  // a name that means an outer parameter here: a default may name itself
+    base::NameId outer;   // a name that means an outer parameter here: a default may name itself
+    bool broken = false;  // its card could not be read
   };
   struct Asked {
     const Frame* frame;
@@ -84,13 +85,16 @@ class Parameters {
   void fail(ParameterState& state, const Definition& definition, std::string message, source::Span where);
 
   std::variant<model::Number, std::string> lookup(const Definition& asking, base::NameId name);
+  void blame(const Frame& frame, model::CardId card, source::Span where, std::string message);
   expression::Meaning meaning(const Definition& asking);
   void tell(ParameterState& state);
 
   Work& work_;
   expression::Literals literals_ = expression::Literals::milli;  // the reading in force
   bool quiet_ = false;
-  bool odd_ = false;  // some parameter looked up rests on an odd literal
+  bool odd_ = false;           // some parameter looked up rests on an odd literal
+  base::NameId failed_;        // the parameter that was looked up last without success
+  model::CardId failed_card_;  // and the card that is at fault
 };
 
 }  // namespace flatten

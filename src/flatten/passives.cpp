@@ -34,6 +34,12 @@ bool means_not_fitted(std::string_view word) {
   return std::any_of(words.begin(), words.end(), [&](std::string_view known) { return base::same_name(known, word); });
 }
 
+bool begins_like_number(std::string_view text) {
+  if (!text.empty() && (text.front() == '+' || text.front() == '-')) text.remove_prefix(1);
+  if (!text.empty() && text.front() == '.') text.remove_prefix(1);
+  return !text.empty() && text.front() >= '0' && text.front() <= '9';
+}
+
 Number scaled(model::ExpressionPool& pool, model::Op op, const Number& number, double factor) {
   if (!number.fixed()) return {0, expression::add_binary(pool, op, number, Number{factor, {}})};
   return {op == model::Op::multiply ? number.value * factor : number.value / factor, {}};
@@ -41,10 +47,22 @@ Number scaled(model::ExpressionPool& pool, model::Op op, const Number& number, d
 
 }  // namespace
 
-Unmodelled Elements::without_value(const model::ElementCard& card, base::NameId word) const {
+// What stands in place of a value. A text that was surely meant as one is told: who reads only the card may miss it.
+Unmodelled Elements::without_value(const Frame& frame, const model::ElementCard& card, base::NameId word) {
   const base::NameId wanted = word.valid() ? word : card.reference.name;
-  const bool not_fitted = wanted.valid() && means_not_fitted(work_.names.text(wanted));
-  return {not_fitted ? Why::not_fitted : Why::no_value, wanted};
+  if (!wanted.valid()) return {Why::no_value, {}};
+  const std::string_view text = work_.names.text(wanted);
+  if (means_not_fitted(text)) return {Why::not_fitted, wanted};
+  const bool parameter = parameters_.find(&frame, wanted).frame != nullptr;
+  if (!parameter && !begins_like_number(text)) return {Why::no_value, wanted};
+  const bool placed = card.reference.name == wanted;
+  const source::Span where = placed ? work_.place(card.card, card.reference) : work_.netlist.span(card.card);
+  const std::string_view what = parameter ? "is a parameter, and stands without braces" : "is no number";
+  // A capacitor's part text often begins with its value, and at DC nothing comes of it.
+  if (card.letter != 'c')
+    work_.problems.say(ProblemKind::value, base::Level::warning, where, frame.instance,
+                       fmt::format("{} has no value: \"{}\" {}", work_.shown(card.name), work_.shown(wanted), what));
+  return {parameter ? Why::parameter_name : Why::bad_value, wanted};
 }
 
 // The value on the card, or that of its model.
@@ -97,16 +115,17 @@ Elements::Outcome Elements::resistor(const Frame& frame, const model::ElementCar
   const Reading reading = passive_value(frame, card, model);
   if (std::holds_alternative<Failed>(reading)) return std::nullopt;
   if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
-  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(frame, card, word->word);
   Quantity quantity = std::get<Quantity>(reading);
   if (quantity.number.fixed() && quantity.number.value < 0) {
     const source::Span where = quantity.where.valid() ? quantity.where : work_.netlist.span(card.card);
-    work_.problems.say(ProblemKind::value, base::Level::error, where, frame.instance,
-                       fmt::format("a resistance cannot be negative, and {} is {}", work_.shown(card.name),
-                                   base::si_text(quantity.number.value, "ohm")));
+    work_.fail(ProblemKind::value, card.card, where, frame.instance,
+               fmt::format("a resistance cannot be negative, and {} is {}", work_.shown(card.name),
+                           base::si_text(quantity.number.value, "ohm")));
     return std::nullopt;
   }
   const std::optional<double> count = fixed_parameter(frame, card, "m");
+  if (!count && parameter(card, "m") != nullptr) return Unmodelled{Why::unsupported, {}};
   if (count && *count > 0)
     quantity.number = scaled(work_.circuit.expressions, model::Op::divide, quantity.number, *count);
   detail(frame, card, quantity, model);
@@ -120,14 +139,52 @@ Elements::Outcome Elements::reactance(const Frame& frame, const model::ElementCa
   const Reading reading = passive_value(frame, card, model);
   if (std::holds_alternative<Failed>(reading)) return std::nullopt;
   if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
-  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(frame, card, word->word);
   const auto& quantity = std::get<Quantity>(reading);
   suspect(quantity);
+  // At DC an inductor is its series resistance and a capacitor its leakage, where the card gives one.
+  const KeyOhms own = key_ohms(frame, card, card.letter == 'c' ? "rpar" : "rser");
+  if (own.failed) return std::nullopt;
+  if (own.ohms) return model::Resistor{*own.ohms};
   if (card.letter == 'c') return model::Capacitor{quantity.number};
-  // At DC an inductor is its series resistance, where the card gives one.
-  const std::optional<double> series_ohms = fixed_parameter(frame, card, "rser");
-  if (series_ohms && *series_ohms > 0) return model::Resistor{{*series_ohms, {}}};
   return model::Inductor{quantity.number};
+}
+
+Elements::KeyOhms Elements::key_ohms(const Frame& frame, const model::ElementCard& card, std::string_view key) {
+  const model::Assignment* const assignment = parameter(card, key);
+  if (assignment == nullptr) return {};
+  const Reading reading = values_.read(frame, *assignment, card.card, Letter::resistor);
+  if (std::holds_alternative<Failed>(reading)) return {std::nullopt, true};
+  const auto* const quantity = std::get_if<Quantity>(&reading);
+  if (quantity == nullptr || (quantity->number.fixed() && quantity->number.value < 0)) {
+    work_.fail(ProblemKind::value, card.card, work_.place(card.card, assignment->key), frame.instance,
+               fmt::format("{} of {} is no resistance", work_.shown(assignment->key.name), work_.shown(card.name)));
+    return {std::nullopt, true};
+  }
+  if (quantity->number.fixed() && quantity->number.value == 0) return {};
+  suspect(*quantity);
+  return {quantity->number, false};
+}
+
+void Elements::add_series_resistance(const Frame& frame, const model::ElementCard& card) {
+  model::Circuit& circuit = work_.circuit;
+  const KeyOhms series = key_ohms(frame, card, "rser");
+  if (series.failed) circuit.elements.back().part = Unmodelled{Why::broken_card, {}};
+  if (!series.ohms) return;
+  const model::Element source = circuit.elements.back();
+  const std::string path = std::string(work_.names.text(source.name)) + ".";
+  model::NetId& plus = circuit.pins[source.first_pin];
+  const model::NetId outer = plus;
+  plus = work_.wiring.make(work_.names.intern(path + std::string(work_.names.text(circuit.nets[outer.index()].name))));
+  const model::NetId inner = plus;
+  model::Element resistor = source;
+  resistor.name = work_.names.intern(path + "Rser");
+  resistor.first_pin = static_cast<std::uint32_t>(circuit.pins.size());
+  resistor.letter = 'r';
+  resistor.part = model::Resistor{*series.ohms};
+  circuit.pins.push_back(outer);
+  circuit.pins.push_back(inner);
+  circuit.elements.push_back(resistor);
 }
 
 Elements::Outcome Elements::independent(const Frame& frame, const model::ElementCard& card) {
@@ -137,11 +194,10 @@ Elements::Outcome Elements::independent(const Frame& frame, const model::Element
     reading = values_.read(frame, *dc, card.card, Letter::other);
   if (std::holds_alternative<Failed>(reading)) return std::nullopt;
   if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
-  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(frame, card, word->word);
   const auto& quantity = std::get<Quantity>(reading);
   suspect(quantity);
-  const model::Assignment* const series = parameter(card, "rser");
-  if (card.letter == 'v' && series != nullptr) say_left_out(frame, card, series->key, "sources are ideal");
+  if (card.at_time_zero) work_.circuit.at_time_zero.push_back(current_);
   if (card.letter == 'v') return model::VoltageSource{quantity.number};
   return model::CurrentSource{quantity.number};
 }

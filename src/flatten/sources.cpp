@@ -30,7 +30,7 @@ Elements::Outcome Elements::gain_source(const Frame& frame, const model::Element
   const Reading reading = values_.read(frame, card.value, card.card, Letter::other);
   if (std::holds_alternative<Failed>(reading)) return std::nullopt;
   if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
-  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(frame, card, word->word);
   const auto& quantity = std::get<Quantity>(reading);
   suspect(quantity);
   const model::Circuit& circuit = work_.circuit;
@@ -50,13 +50,13 @@ Elements::Outcome Elements::current_controlled(const Frame& frame, const model::
   const Reading reading = values_.read(frame, card.value, card.card, Letter::other);
   if (std::holds_alternative<Failed>(reading)) return std::nullopt;
   if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
-  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(card, word->word);
+  if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(frame, card, word->word);
   const auto& quantity = std::get<Quantity>(reading);
   const model::ElementId through = parameters_.source(frame, card.reference.name);
   if (!through.valid()) {
-    work_.problems.say(ProblemKind::source, base::Level::error, work_.place(card.card, card.reference), frame.instance,
-                       fmt::format("{} is controlled by the current of {}, and there is no such voltage source here",
-                                   work_.shown(card.name), work_.shown(card.reference.name)));
+    work_.fail(ProblemKind::source, card.card, work_.place(card.card, card.reference), frame.instance,
+               fmt::format("{} is controlled by the current of {}, and there is no such voltage source here",
+                           work_.shown(card.name), work_.shown(card.reference.name)));
     return std::nullopt;
   }
   suspect(quantity);
@@ -69,7 +69,7 @@ Elements::Outcome Elements::behavioural(const Frame& frame, const model::Element
     return Unmodelled{Why::unsupported, card.reference.name};
   const auto made = values_.tree(frame, card.value, card.card);
   if (std::holds_alternative<Failed>(made)) return std::nullopt;
-  if (const auto* word = std::get_if<NoValue>(&made)) return without_value(card, word->word);
+  if (const auto* word = std::get_if<NoValue>(&made)) return without_value(frame, card, word->word);
   const Tree& tree = std::get<Tree>(made);
   if (tree.odd) suspect(tree.readings);
   if (drives_current) {

@@ -27,8 +27,8 @@ Reading Values::read(const Frame& frame, const model::Value& value, model::CardI
           [](std::monostate) -> Reading { return NoValue{}; },
           [&](double number) -> Reading {
             if (std::isfinite(number)) return plain(number);
-            work_.problems.say(ProblemKind::value, base::Level::error, work_.netlist.span(card), frame.instance,
-                               "the value is not a finite number");
+            work_.fail(ProblemKind::value, card, work_.netlist.span(card), frame.instance,
+                       "the value is not a finite number");
             return Failed{};
           },
           [&](model::OddLiteralId id) -> Reading { return choose(work_.netlist.odd_literals[id.index()], letter); },

@@ -53,11 +53,13 @@ class Wiring {
   // The net that an expression of a scope means by a name; `nets` are the instance's. None where no element has it.
   std::optional<model::NetId> named(model::ScopeId scope, base::NameId name, const std::vector<model::NetId>& nets);
 
- private:
+  // A net that no node names.
   model::NetId make(base::NameId name) {
     circuit_.nets.push_back({name});
     return model::NetId{static_cast<std::uint32_t>(circuit_.nets.size() - 1)};
   }
+
+ private:
   NodeSlot::Kind kind_of(base::NameId name) const;
 
   struct Nodes {

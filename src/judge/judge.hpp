@@ -82,15 +82,21 @@ void judge_input(model::AuditedInput& input, const model::SensorDeclaration* sen
 
 // What the rules of whole boards look at.
 struct BoardFacts {
+  struct Unreadable {
+    source::Span where;  // of the error
+    source::Span card;
+    std::string reason;     // a clause; empty where none is known
+    std::size_t taken = 0;  // further cards that are lost by the same error
+  };
   struct Missing {
     source::Span where;
-    std::string what;  // which file and why: "models/clamp.lib: no such file"
+    std::string what;  // which and why, a clause: cannot include "models/clamp.lib": no such file
   };
   struct Elsewhere {
     source::Span where;  // the first of them
     std::size_t count = 0;
   };
-  std::vector<source::Span> unreadable;  // cards
+  std::vector<Unreadable> unreadable;
   std::vector<Missing> missing_includes;
   std::vector<std::string> assumptions;     // one sentence each, without a full stop
   std::vector<Elsewhere> suspects;          // outside audited networks: one entry a file

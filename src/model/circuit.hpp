@@ -68,7 +68,17 @@ struct Device {
 
 // Kept, but without a model: nothing is known of what it does at its pins.
 struct Unmodelled {
-  enum class Why : std::uint8_t { unknown_letter, no_model, missing_subcircuit, unsupported, no_value, not_fitted };
+  enum class Why : std::uint8_t {
+    unknown_letter,
+    no_model,
+    missing_subcircuit,
+    unsupported,
+    no_value,        // nothing stands in its place, or a word that is neither value nor model
+    parameter_name,  // a parameter's name stands there without braces
+    bad_value,       // what begins like a number and is none
+    not_fitted,
+    broken_card,  // its card, or one that it rests on, could not be read: Netlist::faults says why
+  };
   Why why = Why::no_model;
   base::NameId wanted;  // the model, subcircuit or part text that the card names, if any
 };
@@ -154,9 +164,11 @@ struct Circuit {
   std::vector<DeviceParameter> device_parameters;
   std::vector<Detail> details;  // ordered by element
   std::vector<SuspectValue> suspects;
+  std::vector<ElementId> at_time_zero;  // sources without a DC value, taken at the value of their function at time zero
   std::vector<SweptParameter> swept;
   ExpressionPool expressions;  // residuals and behavioural expressions; leaves are net_volts, amperes, variable
   double temperature = 27;     // degC, of expressions that ask for it
+  std::string cut;             // the limit at which elements were left out, in a sentence; empty: none was
 
   [[nodiscard]] NetId pin(const Element& element, std::size_t i) const { return pins[element.first_pin + i]; }
   [[nodiscard]] NetId pin(const Instance& instance, std::size_t i) const { return pins[instance.first_pin + i]; }

@@ -2,6 +2,8 @@
 #pragma once
 
 #include <cstdint>
+#include <map>
+#include <string>
 #include <vector>
 
 #include "base/names.hpp"
@@ -23,6 +25,13 @@ struct CardRecord {
   std::uint32_t begin = 0;
   std::uint32_t end = 0;
   CardFate fate = CardFate::modelled;
+};
+
+// Why a card has the fate error.
+struct CardFault {
+  source::Span where;
+  std::string reason;  // a clause without a full stop
+  CardId cause;        // the other card whose fault it is (a header without its end, a parameter); none: its own
 };
 
 // A name as it stands in a card.
@@ -50,6 +59,7 @@ struct ElementCard {
   CardId card;
   char letter = '?';
   bool switched_off = false;  // S W: starts open
+  bool at_time_zero = false;  // V I: no DC value is written; `value` is that of its function at time zero
   Range nodes;                // in Netlist::words
   Word reference;             // model (R C L D Q J M S W), subcircuit (X), controlling source (F H W), or a part text
   base::NameId second_reference;  // W: the model, beside its controlling source
@@ -64,6 +74,7 @@ struct ModelCard {
   base::NameId type;
   CardId card;
   Range parameters;
+  bool broken = false;  // it could not be read, or another of its name says something else: nothing may use it
 };
 
 // .param NAME = VALUE
@@ -71,37 +82,43 @@ struct ParameterCard {
   Word name;
   Value value;  // monostate: a parameter without a default
   CardId card;
+  bool broken = false;  // what it is worth could not be read
 };
 
 // The top level (scope 0) or a subcircuit definition.
 struct Scope {
   base::NameId name;                      // of the subcircuit
   CardId card;                            // its .subckt
+  CardId last;                            // its .ends; none where it has none
+  bool broken = false;                    // as of a model
   ScopeId parent;                         // where it was defined; none for the top level
   Range ports;                            // in Netlist::words
   std::vector<ParameterCard> defaults;    // of the .subckt card
   std::vector<ParameterCard> parameters;  // .param cards, in order
   std::vector<ModelCard> models;
   base::LargeVector<ElementCard> elements;  // in order
-  std::vector<ScopeId> scopes;        // subcircuits defined inside
+  std::vector<ScopeId> scopes;              // subcircuits defined inside
 };
 
-// A note that something of the text was not followed: a control block, an analysis, a missing file.
+// A file, or a section of one, that could not be included.
 struct MissingInclude {
   CardId card;
   source::Span where;
+  std::string what;  // which and why: "models/clamp.lib": no such file
 };
 
 struct Netlist {
   source::SourceId root;
   base::LargeVector<CardRecord> cards;  // in reading order, included files where their card stands
-  std::vector<Scope> scopes;      // [0] is the top level
+  std::vector<Scope> scopes;            // [0] is the top level
   base::LargeVector<Word> words;
   std::vector<Assignment> assignments;
   std::vector<OddLiteral> odd_literals;
   ExpressionPool expressions;
   std::vector<Word> globals;  // nets of .global
   std::vector<MissingInclude> missing_includes;
+  std::map<CardId, CardFault> faults;  // of cards with the fate error: the first of each
+  std::string cut;                     // the limit at which cards were left out, in a sentence; empty: none was
 
   [[nodiscard]] source::Span span(CardId id) const {
     const CardRecord& card = cards[id.index()];

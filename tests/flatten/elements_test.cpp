@@ -89,13 +89,99 @@ TEST_CASE("m resistors in parallel are one of a part of the resistance") {
   CHECK(d.ohms("R1") == 2500);
 }
 
-TEST_CASE("an inductor with a series resistance is that resistance at DC") {
+TEST_CASE("an inductor with a series resistance is that resistance at DC, a capacitor with a parallel one likewise") {
   Deck d;
   d.element("L1", "a b", 1e-6, "", {{"Rser", 0.25}});
-  d.element("V1", "a 0", 3.3, "", {{"Rser", 0.05}});
+  d.element("C1", "a b", 1e-6, "", {{"Rpar", 1e7}});
+  d.element("C2", "a b", 1e-6, "", {{"Rser", 0.1}});
   d.flatten();
   CHECK(d.ohms("L1") == 0.25);
-  CHECK(d.said() == "note at 110: V1 is used without Rser: sources are ideal\n");
+  CHECK(d.ohms("C1") == 1e7);
+  CHECK(std::holds_alternative<model::Capacitor>(d.at("C2").part));
+  CHECK(d.said().empty());
+}
+
+TEST_CASE("a voltage source with a series resistance is a source and a resistor before its plus pin") {
+  Deck d;
+  d.element("V1", "VCC 0", 3.3, "", {{"Rser", 1000.0}});
+  d.element("V2", "a b", 1.0, "", {{"Rser", 0.0}});
+  d.element("V3", "a b", 1.0, "", {{"Rser", d.word("nothing")}});
+  d.element("V4", "a b", 1.0, "", {{"Rser", -1.0}});
+  d.subcircuit("SUPPLY", "out");
+  d.element("V1", "out 0", 5.0, "", {{"Rser", 2.0}});
+  d.ends();
+  d.part("X1", "VDD", "SUPPLY");
+  d.flatten();
+  CHECK(d.pins("V1") == "V1.VCC 0");
+  CHECK(d.pins("V1.Rser") == "VCC V1.VCC");
+  CHECK(d.ohms("V1.Rser") == 1000);
+  CHECK(d.pins("V2") == "a b");
+  CHECK(d.unmodelled("V3").why == Why::broken_card);
+  CHECK(d.unmodelled("V4").why == Why::broken_card);
+  CHECK(d.pins("X1.V1.Rser") == "VDD X1.V1.VDD");
+  CHECK(d.circuit.instances.at(0).element_count == 2);
+  CHECK(d.said() == "error at 210: Rser of V3 is no resistance\nerror at 310: Rser of V4 is no resistance\n");
+}
+
+TEST_CASE("a value that is none is told at its place: digits that make no number, a parameter without braces") {
+  Deck d;
+  d.parameter("RUP", 1000.0);
+  d.element("R1", "a b", d.word("1.0.0k"), "1.0.0k");
+  d.element("R2", "a b", d.word("RUP"), "RUP");
+  d.element("R3", "a b", d.word("RNONE"), "RNONE");
+  d.element("C1", "a b", d.word("100n_X7R"), "100n_X7R");
+  d.flatten();
+  CHECK(d.unmodelled("R1").why == Why::bad_value);
+  CHECK(d.unmodelled("R2").why == Why::parameter_name);
+  CHECK(d.unmodelled("R3").why == Why::no_value);
+  CHECK(d.unmodelled("C1").why == Why::bad_value);
+  CHECK(d.said() ==
+        "warning at 105: R1 has no value: \"1.0.0k\" is no number\n"
+        "warning at 205: R2 has no value: \"RUP\" is a parameter, and stands without braces\n");
+}
+
+TEST_CASE("what a parameter of a broken card is worth is not known, whatever another card says") {
+  Deck d;
+  d.parameter("R", 1000.0);
+  d.netlist.scopes[0].parameters.push_back({{d.names.intern("R"), 100}, {}, d.card(), true});
+  const auto used = d.element("R1", "a b", d.name("R")).card;
+  d.parameter("S", d.name("R"));
+  d.flatten();
+  CHECK(d.unmodelled("R1").why == Why::broken_card);
+  CHECK(d.netlist.faults.at(used).reason == "it needs parameter R, which could not be read");
+  CHECK(d.netlist.faults.at(used).cause == model::CardId{1});
+  CHECK(d.netlist.faults.at(model::CardId{3}).cause == model::CardId{1});
+}
+
+TEST_CASE("what uses a broken model or subcircuit is broken too, whatever another card says") {
+  Deck d;
+  d.model("DX", "D");
+  d.netlist.scopes[0].models.push_back({d.names.intern("DX"), {}, d.card(), {}, true});
+  d.part("D1", "a b", "DX");
+  d.subcircuit("S", "p");
+  d.ends();
+  d.subcircuit("S", "p");
+  d.scope().broken = true;
+  d.ends();
+  const auto used = d.part("X1", "a", "S").card;
+  d.flatten();
+  CHECK(d.unmodelled("D1").why == Why::broken_card);
+  CHECK(d.unmodelled("X1").why == Why::broken_card);
+  CHECK(d.netlist.faults.at(used).reason == "subcircuit S could not be read");
+}
+
+TEST_CASE("a circuit that is cut at its limit says so") {
+  Deck d;
+  d.limits.elements = 2;
+  for (const char* name : {"R1", "R2", "R3", "R4"}) d.element(name, "a b", 1000.0);
+  d.flatten();
+  CHECK(d.circuit.cut == "the flat circuit has more elements than the limit elements = 2");
+  Deck whole;
+  whole.limits.elements = 2;
+  whole.element("R1", "a b", 1000.0);
+  whole.element("R2", "a b", 1000.0);
+  whole.flatten();
+  CHECK(whole.circuit.cut.empty());
 }
 
 TEST_CASE("a part without a value, or with a word in its place, is kept without a model") {
@@ -147,7 +233,7 @@ TEST_CASE("a negative resistance is an error at its value, and zero is a short")
         "error at 100: a resistance cannot be negative, and R1 is -5 ohm\n"
         "error at 233: a resistance cannot be negative, and R2 is -4.7 kohm\n");
   CHECK(d.netlist.cards[odd_card.index()].fate == CardFate::error);
-  CHECK(d.unmodelled("R1").why == Why::unsupported);  // its pins stay, so that nothing passes for checked
+  CHECK(d.unmodelled("R1").why == Why::broken_card);  // its pins stay, so that nothing passes for checked
   CHECK(d.pins("R1") == "a b");
 }
 

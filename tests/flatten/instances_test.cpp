@@ -86,7 +86,7 @@ TEST_CASE("a wrong number of pins is an error that gives both numbers") {
         "error at 300: X1 has 3 pins, and subcircuit NTC has 2 ports\n"
         "error at 400: X2 has 1 pin, and subcircuit NTC has 2 ports\n");
   CHECK(d.pins("X1") == "p q r");
-  CHECK(d.unmodelled("X1").why == Why::unsupported);
+  CHECK(d.unmodelled("X1").why == Why::broken_card);
 }
 
 TEST_CASE("a subcircuit that contains itself is an error, through others too") {

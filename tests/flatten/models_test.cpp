@@ -132,5 +132,5 @@ TEST_CASE("an error in a model is told once at the model and leaves its devices 
   CHECK(d.said() == "error at 0: parameter nothing is not defined\n");
   CHECK(d.netlist.cards[0].fate == CardFate::error);
   CHECK(d.netlist.cards[card.index()].fate == CardFate::error);
-  CHECK(d.unmodelled("D2").why == Why::unsupported);
+  CHECK(d.unmodelled("D2").why == Why::broken_card);
 }

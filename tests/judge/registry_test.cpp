@@ -20,7 +20,7 @@ model::AuditedInput with(void (*change)(model::AuditedInput&)) {
 
 judge::BoardFacts facts_of_everything() {
   judge::BoardFacts facts;
-  facts.unreadable = {fixtures::place(1)};
+  facts.unreadable = {{fixtures::place(1), fixtures::place(1), "", 0}};
   facts.missing_includes = {{fixtures::place(2), "clamp.lib: no such file"}};
   facts.assumptions = {"net AGND is ground"};
   facts.suspects = {{fixtures::place(3), 2}};

@@ -65,7 +65,7 @@ TEST_CASE("A rule that is off finds nothing, and one that an input turns on agai
 
 TEST_CASE("The levels of the board hold for findings of the board") {
   judge::BoardFacts facts;
-  facts.unreadable = {fixtures::place(3)};
+  facts.unreadable = {{fixtures::place(3), fixtures::place(3), "", 0}};
   facts.assumptions = {"net GND is ground"};
   facts.levels = {fixtures::level("unreadable-card", Level::error), fixtures::level("assumed-value", std::nullopt)};
   const auto found = fixtures::board_findings(facts);

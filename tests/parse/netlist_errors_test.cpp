@@ -54,8 +54,6 @@ constexpr Broken all[]{
     {"5V a b", "2:1: error: expected an element, which begins with a letter, or a dot card, found \"5V\""},
     {"{x} a b", "2:1: error: expected an element, which begins with a letter, or a dot card, found \"{x}\""},
     {"((", "2:1: error: expected an element or a dot card, found \"((\""},
-    {".subckt", "2:8: error: expected the name of the subcircuit, found the end of the card"},
-    {".subckt S a b", "2:1: error: the subcircuit S has no .ends"},
     {".ends", "2:1: error: .ends stands without .subckt before it"},
     {".param", "2:7: error: expected name = value behind .param, found the end of the card"},
     {".param a", "2:8: error: expected a value for a, found the end of the card"},

@@ -80,7 +80,7 @@ TEST_CASE("netlist includes: a section of a library is read, and only that") {
   CHECK(reading.element("R1") == "r R1(a b) = 1");
   CHECK(reading.element("R2") == "no such element");
   CHECK(NetlistReading("title\n.lib x.lib typical\n", files).said() ==
-        Said{"t.cir:2:12: warning: x.lib has no section typical"});
+        Said{"t.cir:2:12: warning: \"x.lib\" has no section typical"});
 }
 
 TEST_CASE("netlist includes: a library without sections is read whole") {

@@ -73,8 +73,61 @@ TEST_CASE("netlist scopes: a control block is skipped whole, whatever is in it")
   const NetlistReading reading("title\n.control\nrun {\n'\n.subckt\n.endc\nR1 a b 1\n");
   CHECK(reading.fates() == "1 0 5 0");
   CHECK(reading.said() == Said{"t.cir:2:1: note: a control block of 3 lines is skipped: nothing in it is run"});
-  CHECK(NetlistReading("title\n.control\nrun\n").said() ==
-        Said{"t.cir:2:1: warning: a .control without .endc: the 1 line behind it are skipped"});
+}
+
+TEST_CASE("netlist scopes: what stands behind a .control without .endc counts as not read") {
+  const NetlistReading reading("title\nR1 a b 1\n.control\nrun\nR9 a 0 1k\n.param p=1\n.model DX D\n.subckt S x\n");
+  CHECK(reading.said() == Said{"t.cir:3:1: error: .control has no .endc, so no card from here on counts as read"});
+  CHECK(reading.fates() == "1 0 0 6");
+  CHECK(reading.show(reading.top().parameters) == "p=nothing");
+  CHECK(reading.top().parameters[0].broken);
+  CHECK(reading.top().models.at(0).broken);
+  CHECK(reading.netlist().scopes.at(1).broken);
+}
+
+TEST_CASE("netlist scopes: what stands behind a .subckt without .ends counts as not read, for it and for the board") {
+  // The forgotten .ends may be the one of OUT or of IN: nobody knows whose R9 is.
+  const NetlistReading reading(
+      "title\nR1 a b 1\n.subckt OUT x y\nR1 x y 1k\n.subckt IN x y\n.param p=1\nR1 x y 1k\n.ends\nR9 a 0 1k\n.model DX "
+      "D\n"
+      ".op\n.end\n");
+  CHECK(reading.said() ==
+        Said{"t.cir:3:1: error: the subcircuit OUT has no .ends, so no card from here on counts as read",
+             "t.cir:11:1: note: analyses, options and output are not followed: .op (1 card)"});
+  CHECK(reading.fates() == "1 0 1 9");
+  CHECK(reading.netlist().scopes.at(1).broken);
+  CHECK(reading.netlist().scopes.at(2).broken);
+  CHECK(reading.top().parameters.at(0).broken);
+  CHECK(reading.top().models.at(0).broken);
+  CHECK(reading.netlist().faults.at(model::CardId{2}).cause == model::CardId{1});
+}
+
+TEST_CASE("netlist scopes: a header that cannot be read keeps its cards from the board, and its users from it") {
+  for (const char* header : {".subckt S x y p={", ".subckt S x y p=", ".subckt"}) {
+    INFO(header);
+    const NetlistReading reading("title\n" + std::string(header) + "\nR9 x y 1k\n.ends\nR1 a b 1\n");
+    CHECK(reading.said().size() == 1);
+    CHECK(reading.fates() == "3 0 0 1");
+    CHECK(reading.top().elements.size() == 1);
+    CHECK(reading.netlist().scopes.at(1).broken);
+  }
+}
+
+TEST_CASE("netlist scopes: parameters and models on cards that are not read are known to be unknown") {
+  const auto broken = [](const std::string& text) {
+    const NetlistReading reading(text);
+    std::string names;
+    for (const model::ParameterCard& card : reading.top().parameters)
+      if (card.broken) names += reading.name(card.name.name) + " ";
+    for (const model::ModelCard& card : reading.top().models)
+      if (card.broken) names += reading.name(card.name) + " ";
+    return names;
+  };
+  CHECK(broken("title\n.param R=1k\n.param R={2k\n") == "R ");
+  CHECK(broken("title\n.param A = 1 B={2*} C= 'x' D=\n") == "A B C D ");
+  CHECK(broken("title\n.param A {2*}\n") == "A ");
+  CHECK(broken("title\n.model DX D is={\n") == "DX ");
+  CHECK(broken("title\n.if (x)\n.param R=2k\n.model DX D\n.endif\n") == "R DX ");
 }
 
 TEST_CASE("netlist scopes: cards behind .end are counted as skipped, with one warning at the first") {

@@ -10,9 +10,8 @@ void run(const BoardContext& context, Findings& out) {
   for (const BoardFacts::Missing& missing : context.facts.missing_includes) {
     model::Finding finding = out.blank();
     if (missing.where.valid()) finding.where = missing.where;
-    finding.message =
-        fmt::format("an included file could not be read: {}; parts that take their model from it have none here",
-                    base::printable(missing.what));
+    finding.message = fmt::format("{}; what stands there, models and parts of the board alike, is missing here",
+                                  base::printable(missing.what));
     out.add(std::move(finding));
   }
 }

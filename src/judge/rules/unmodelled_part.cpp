@@ -11,17 +11,21 @@ namespace {
 
 using model::Unmodelled;
 
+const Unmodelled* unmodelled(const BoardView& board, model::ElementId id) {
+  const model::Element* element = element_of(board, id);
+  return element == nullptr ? nullptr : std::get_if<Unmodelled>(&element->part);
+}
+
 // Why there is no model, as a clause after the part's name.
 std::string reason_text(const BoardView& board, model::ElementId id) {
-  const model::Element* element = element_of(board, id);
-  const auto* part = element == nullptr ? nullptr : std::get_if<Unmodelled>(&element->part);
+  const Unmodelled* part = unmodelled(board, id);
   if (part == nullptr) return "has no model";
   const bool named = part->wanted.valid() && board.names != nullptr;
   const std::string wanted =
       named ? fmt::format(" \"{}\"", base::printable_short(board.names->text(part->wanted))) : std::string{};
   switch (part->why) {
     case Unmodelled::Why::unknown_letter:
-      return fmt::format("begins with a letter that no SPICE element has{}", wanted);
+      return named ? fmt::format("has no model here (it is{})", wanted) : "has no model here";
     case Unmodelled::Why::no_model:
       return fmt::format("has no model{} in the netlist", wanted);
     case Unmodelled::Why::missing_subcircuit:
@@ -29,7 +33,13 @@ std::string reason_text(const BoardView& board, model::ElementId id) {
     case Unmodelled::Why::unsupported:
       return fmt::format("is of a kind{} that is not modelled here", wanted);
     case Unmodelled::Why::no_value:
-      return "has no value";
+      return named ? fmt::format("has no value: there is no model{}, and no number", wanted) : "has no value";
+    case Unmodelled::Why::parameter_name:
+      return fmt::format("has no value: the parameter{} stands without braces", wanted);
+    case Unmodelled::Why::bad_value:
+      return fmt::format("has no value:{} is no number", wanted);
+    case Unmodelled::Why::broken_card:
+      return "could not be read";
     case Unmodelled::Why::not_fitted:
       return "is marked as not fitted";
   }
@@ -67,6 +77,9 @@ void run(const InputContext& context, Findings& out) {
   std::vector<bool> told(touches.size(), false);
   for (std::size_t i = 0; i < touches.size(); ++i) {
     if (told[i]) continue;
+    // Its card's error is why the input is not audited, and is told there.
+    const Unmodelled* part = unmodelled(context.board, touches[i].element);
+    if (part != nullptr && part->why == Unmodelled::Why::broken_card) continue;
     std::vector<const model::UnmodelledTouch*> same;
     for (std::size_t j = i; j < touches.size(); ++j)
       if (j == i || (touches[j].element == touches[i].element && touches[i].element.valid())) {

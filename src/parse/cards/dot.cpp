@@ -54,6 +54,7 @@ bool CardsReader::is_passed_over(const Card& card, model::CardId id) {
       now.in_control = false;
     } else {
       ++now.control_cards;
+      now.control_unread.push_back(unread(card, id));
     }
     if (!now.in_control) {
       say(base::Level::note, now.control, netlist_.span(now.control),
@@ -75,7 +76,7 @@ bool CardsReader::is_passed_over(const Card& card, model::CardId id) {
 
 void CardsReader::read_card(Card& card, model::CardId id) {
   if (card.text(0).front() == '.') return read_dot(card, id);
-  if (conditionals_ > 0) return set_fate(id, model::CardFate::error);
+  if (conditionals_ > 0) return set_fault(id, netlist_.span(conditional_), {}, conditional_);
   read_element_card(card, id);
 }
 
@@ -115,12 +116,14 @@ void CardsReader::pass_analysis(const Card& card, model::CardId id) {
 
 void CardsReader::read_dot(Card& card, model::CardId id) {
   if (card.is(0, ".if") && conditionals_++ == 0) {
+    conditional_ = id;
     return card.fail(0,
                      "conditional cards are not followed by this version: all cards from here to .endif are not read");
   }
   if (conditionals_ > 0) {
     if (card.is(0, ".endif")) --conditionals_;
-    return set_fate(id, model::CardFate::error);
+    leave_broken(unread(card, id), open_.back());
+    return set_fault(id, netlist_.span(conditional_), {}, conditional_);
   }
   if (card.is(0, ".subckt")) return read_subcircuit(card, id);
   if (card.is(0, ".ends")) return read_ends(card, id);
@@ -139,6 +142,7 @@ void CardsReader::read_dot(Card& card, model::CardId id) {
     file().in_control = true;
     file().control = id;
     file().control_cards = 0;
+    file().control_unread.clear();
     return;
   }
   if (!analysis_name(card).empty()) return pass_analysis(card, id);
@@ -152,11 +156,7 @@ void CardsReader::read_dot(Card& card, model::CardId id) {
 // What there is to say at a file's end.
 void CardsReader::finish_file() {
   const File& now = file();
-  if (now.in_control) {
-    say(base::Level::warning, now.control, netlist_.span(now.control),
-        fmt::format("a .control without .endc: the {} line{} behind it are skipped", now.control_cards,
-                    now.control_cards == 1 ? "" : "s"));
-  }
+  if (now.in_control) fail_control();
   if (now.after_end > 0) {
     say(base::Level::warning, now.first_after_end, netlist_.span(now.first_after_end),
         fmt::format("{} card{} behind .end, from this one on, {} skipped", now.after_end, now.after_end == 1 ? "" : "s",

@@ -30,11 +30,13 @@ bool has_sections(std::string_view bytes) {
 void CardsReader::include_file(Card& card, model::CardId id, std::size_t first, std::size_t last, std::string section) {
   const source::Place asked{card.source(), card.begin()};
   if (includes_ >= limits_.includes) {
-    return card.fail(first, fmt::format("more files are included than the limit includes = {}", limits_.includes));
+    netlist_.cut = fmt::format("more files are included than the limit includes = {}", limits_.includes);
+    return card.fail(first, netlist_.cut);
   }
   if (files_.size() > limits_.include_depth) {
-    return card.fail(first, fmt::format("files include one another deeper than the limit include_depth = {}",
-                                        limits_.include_depth));
+    netlist_.cut =
+        fmt::format("files include one another deeper than the limit include_depth = {}", limits_.include_depth);
+    return card.fail(first, netlist_.cut);
   }
   const std::string one = path_text(card.text(first));
   const std::string all = path_text(card.between(card.token(first).begin, card.token(last - 1).end));
@@ -43,18 +45,20 @@ void CardsReader::include_file(Card& card, model::CardId id, std::size_t first, 
     if (auto whole = include_(all, asked); whole.ok()) wanted = whole;
   }
   if (!wanted.ok()) {
-    const source::Span where = card.span(first, last - 1);
     set_fate(id, model::CardFate::skipped);
-    netlist_.missing_includes.push_back({id, where});
-    return say(base::Level::warning, id, where,
-               fmt::format("cannot include \"{}\": {}", base::printable_short(all), base::printable(wanted.error())));
+    return say_missing(
+        id, card.span(first, last - 1),
+        fmt::format("cannot include \"{}\": {}", base::printable_short(all), base::printable(wanted.error())));
   }
   ++includes_;
   if (!may_include(card, *wanted) || read_file(*wanted, 0, section)) return;
-  const source::Span where = card.span(last, last);
-  netlist_.missing_includes.push_back({id, where});
-  say(base::Level::warning, id, where,
-      fmt::format("{} has no section {}", base::printable_short(one), base::printable_short(section)));
+  say_missing(id, card.span(last, last),
+              fmt::format("\"{}\" has no section {}", base::printable_short(one), base::printable_short(section)));
+}
+
+void CardsReader::say_missing(model::CardId id, source::Span where, std::string what) {
+  netlist_.missing_includes.push_back({id, where, what});
+  say(base::Level::warning, id, where, std::move(what));
 }
 
 // A file that is open already, under the same name and with the same text, would include itself for ever.

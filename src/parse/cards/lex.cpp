@@ -1,5 +1,7 @@
 #include "parse/cards/lex.hpp"
 
+#include <algorithm>
+
 #include "grammar/netlist.hpp"
 
 namespace parse {
@@ -82,6 +84,12 @@ struct Act<rules::executable_mark> {
   }
 };
 
+// Of a card with a fault all of the text counts: what is lost there may name a net.
+std::uint32_t end_of_text(const State& s, std::uint32_t least, std::uint32_t end) {
+  while (end > least && std::string_view(" \t\v\f\r\n").find(s.text[end - 1]) != std::string_view::npos) --end;
+  return std::max(least, end);
+}
+
 template <>
 struct Act<rules::card> {
   template <typename ActionInput>
@@ -92,7 +100,7 @@ struct Act<rules::card> {
     for (std::uint32_t at = card.end; at < s.end(in) && (s.text[at] == ')' || s.text[at] == ' '); ++at) {
       if (s.text[at] == ')') card.end = at + 1;
     }
-    if (card.fault != nullptr && card.fault_offset >= card.end) card.end = card.fault_offset + 1;
+    if (card.fault != nullptr) card.end = end_of_text(s, std::max(card.end, card.fault_offset + 1), s.end(in));
     card.tokens = &s.tokens;
     s.taker.card(card);
     s.tokens.clear();

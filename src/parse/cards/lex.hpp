@@ -24,6 +24,7 @@ struct Token {
 };
 
 // One logical line. `end` is past its last word and brackets that close behind it; comments behind that are left out.
+// Of a card with a fault it is past its last byte that is no blank.
 struct LexedCard {
   std::uint32_t begin = 0;
   std::uint32_t end = 0;

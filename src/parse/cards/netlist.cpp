@@ -38,6 +38,14 @@ std::pair<std::uint32_t, std::uint32_t> next_long_line(std::string_view bytes, s
   return {0, 0};
 }
 
+// Cards that move what is open do so even where they cannot be read: what follows them is not what stands before.
+bool opens_or_closes(const Card& card) {
+  for (const std::string_view word : {".subckt", ".ends", ".control", ".if", ".endif"}) {
+    if (card.is(0, word)) return true;
+  }
+  return false;
+}
+
 char first_sign(std::string_view text) {
   const auto at = text.find_first_not_of(" \t\r\n");
   return at == std::string_view::npos ? '\0' : text[at];
@@ -84,8 +92,9 @@ void CardsReader::say(base::Level level, model::CardId card, source::Span where,
 
 void CardsReader::say_fault(const Card& card, model::CardId id) {
   const Fault& fault = *card.fault();
-  set_fate(id, model::CardFate::error);
-  say(base::Level::error, id, {{card.source(), fault.offset}, fault.length}, fault.message);
+  const source::Span where{{card.source(), fault.offset}, fault.length};
+  set_fault(id, where, fault.message, {});
+  say(base::Level::error, id, where, fault.message);
 }
 
 source::Diagnostics CardsReader::diagnostics() && {
@@ -111,8 +120,11 @@ void CardsReader::take(const LexedCard& lexed) {
                  fmt::format("expected an element or a dot card, found \"{}\"",
                              base::printable_short(card.between(card.begin(), card.end()), 40)));
   }
-  if (!card.failed()) read_card(card, id);
-  if (card.failed()) say_fault(card, id);
+  const bool readable = !card.failed();
+  if (readable || opens_or_closes(card)) read_card(card, id);
+  if (!card.failed()) return;
+  say_fault(card, id);
+  if (!card.is(0, ".subckt")) leave_broken(unread(card, id), open_.back());
 }
 
 void CardsReader::take_executable(std::uint32_t offset) {
@@ -123,8 +135,10 @@ void CardsReader::take_executable(std::uint32_t offset) {
 
 void CardsReader::read_long_line(std::uint32_t begin, std::uint32_t end) {
   const model::CardId id = add_card(begin, end, model::CardFate::error);
-  say(base::Level::error, id, {{file().source, begin}, 0},
-      fmt::format("the line has {} bytes, more than the limit line_bytes = {}", end - begin, limits_.line_bytes));
+  const std::string reason =
+      fmt::format("the line has {} bytes, more than the limit line_bytes = {}", end - begin, limits_.line_bytes);
+  set_fault(id, {{file().source, begin}, 0}, reason, {});
+  say(base::Level::error, id, {{file().source, begin}, 0}, reason);
 }
 
 // All lines of the file that is open, from `begin` on. Lines beyond the limit never reach the lexer.

@@ -27,6 +27,13 @@ class CardsReader {
   [[nodiscard]] source::Diagnostics diagnostics() &&;
 
  private:
+  // The names that a card would have defined, had it been read.
+  struct Unread {
+    model::CardId card;
+    std::vector<model::Word> parameters;
+    base::NameId model;
+    base::NameId subcircuit;
+  };
   // How far reading is inside one file.
   struct File {
     source::SourceId source;
@@ -39,7 +46,8 @@ class CardsReader {
     bool in_control = false;
     model::CardId control;
     std::size_t control_cards = 0;
-    bool ended = false;  // behind .end
+    std::vector<Unread> control_unread;  // of the block that is open
+    bool ended = false;                  // behind .end
     model::CardId first_after_end;
     std::size_t after_end = 0;
     model::CardId first_unused;  // the first analysis or output card
@@ -67,7 +75,6 @@ class CardsReader {
   void take_executable(std::uint32_t offset);
   void finish_file();
   void read_later();
-  void close_scopes();
 
   // dot.cpp
   [[nodiscard]] bool is_passed_over(const Card& card, model::CardId id);
@@ -83,11 +90,21 @@ class CardsReader {
   void read_model(Card& card, model::CardId id);
   void read_global(Card& card, model::CardId id);
 
+  // unread.cpp
+  void set_fault(model::CardId id, source::Span where, std::string reason, model::CardId cause);
+  void fail_behind(model::CardId first);
+  [[nodiscard]] std::vector<model::Word> given_names(const Card& card);
+  [[nodiscard]] Unread unread(const Card& card, model::CardId id);
+  void leave_broken(const Unread& unread, model::ScopeId scope);
+  void close_scopes();
+  void fail_control();
+
   // include.cpp
   void read_include(Card& card, model::CardId id);
   void read_library(Card& card, model::CardId id);
   void read_endl(Card& card, model::CardId id);
   void include_file(Card& card, model::CardId id, std::size_t first, std::size_t last, std::string section);
+  void say_missing(model::CardId id, source::Span where, std::string what);
   [[nodiscard]] bool may_include(Card& card, source::SourceId wanted);
 
   model::CardId add_card(std::uint32_t begin, std::uint32_t end, model::CardFate fate);
@@ -108,6 +125,7 @@ class CardsReader {
   std::vector<Said> said_;
   std::size_t includes_ = 0;
   std::size_t conditionals_ = 0;  // open .if
+  model::CardId conditional_;     // the outermost of them
   bool nesting_told_ = false;
 };
 

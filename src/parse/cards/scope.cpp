@@ -24,7 +24,7 @@ void CardsReader::read_subcircuit(Card& card, model::CardId id) {
     nesting_told_ = true;
     card.fail(0, fmt::format("subcircuits lie deeper inside one another than the limit nesting = {}", limits_.nesting));
   } else if (open_.size() > limits_.nesting) {
-    set_fate(id, model::CardFate::error);
+    set_fault(id, netlist_.span(id), fmt::format("it lies deeper than the limit nesting = {}", limits_.nesting), {});
   }
   const std::size_t key = card.first_key(1);
   if (card.size() < 2 || key < 2)
@@ -33,8 +33,8 @@ void CardsReader::read_subcircuit(Card& card, model::CardId id) {
   made.card = id;
   made.parent = open_.back();
   std::size_t next = 2;
+  if (card.size() > 1 && key > 1) made.name = card.name(1);
   if (!card.failed()) {
-    made.name = card.name(1);
     while (next < key && !ends_ports(card, next)) ++next;
     made.ports = card.words(2, next);
   }
@@ -53,29 +53,21 @@ void CardsReader::read_subcircuit(Card& card, model::CardId id) {
     }
   }
   const model::ScopeId made_id{static_cast<std::uint32_t>(netlist_.scopes.size())};
-  const bool linked = !card.failed() && netlist_.cards[id.index()].fate != model::CardFate::error;
-  if (linked) scope().scopes.push_back(made_id);
+  const bool linked = netlist_.cards[id.index()].fate != model::CardFate::error;
+  made.broken = card.failed() || !linked;
+  if (linked && made.name.valid()) scope().scopes.push_back(made_id);
   netlist_.scopes.push_back(std::move(made));
   open_.push_back(made_id);
 }
 
-void CardsReader::read_ends(Card& card, model::CardId /*id*/) {
+void CardsReader::read_ends(Card& card, model::CardId id) {
   if (open_.size() == 1) return card.fail(0, ".ends stands without .subckt before it");
   const base::NameId open = scope().name;
   if (card.size() > 1 && open.valid() && card.name(1) != open) {
     card.fail(1, fmt::format("expected the end of {}, found .ends {}", reading_.names.text(open), card.text(1)));
   }
+  scope().last = id;
   open_.pop_back();
-}
-
-void CardsReader::close_scopes() {
-  for (; open_.size() > 1; open_.pop_back()) {
-    const model::Scope& left = scope();
-    if (netlist_.cards[left.card.index()].fate == model::CardFate::error) continue;  // told already
-    set_fate(left.card, model::CardFate::error);
-    say(base::Level::error, left.card, netlist_.span(left.card),
-        fmt::format("the subcircuit {} has no .ends", reading_.names.text(left.name)));
-  }
 }
 
 // a=1 b={...}, and a 1 without an equals sign.
