@@ -116,6 +116,8 @@ void name_nets(const Reading& reading, const model::Divider& divider, model::Boa
           net, net == model::ground ? "0" : std::string(reading.names.text(reading.circuit.nets[net.index()].name)));
   };
   name(divider.tap);
+  for (const model::BoundEnd* end : {&divider.input.low, &divider.input.high})
+    if (const auto* net = std::get_if<model::NetId>(end)) name(*net);
   for (const auto& candidate : divider.candidates) name(candidate.net);
   for (const model::NetId net : divider.nets) name(net);
 }

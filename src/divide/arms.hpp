@@ -23,8 +23,10 @@ struct Arms {
   std::vector<model::TapCandidate> candidates;  // from the sensor to the pin
 };
 
-// A candidate is an arm from `share` of the heaviest one's weight on; declared roles win over weights.
-[[nodiscard]] Arms choose_arms(const Graph& graph, const Walk& walk, double share, const Weigh& weigh);
+// A candidate is an arm from `share` of the heaviest one's weight on, or where no other leads to a second rail;
+// declared roles win over weights. More than one candidate is weighed.
+[[nodiscard]] Arms choose_arms(const Graph& graph, const SensorEdge& sensor, const Walk& walk, double share,
+                               const Weigh& weigh);
 
 // The arms sorted by the rail that they lead to.
 struct Sides {

@@ -2,8 +2,11 @@
 
 #include <algorithm>
 #include <fmt/format.h>
+#include <limits>
+#include <span>
 
 #include "base/text.hpp"
+#include "divide/leaves.hpp"
 
 namespace divide {
 namespace {
@@ -97,12 +100,32 @@ class Binder {
     for (std::uint32_t i = 0; i < circuit_.swept.size(); ++i)
       if (circuit_.swept[i].sensor == declared.name && circuit_.swept[i].found)
         bound.variable = circuit_.swept[i].variable;
+    if (bound.variable && !moves_own(bound)) {
+      error(declared.sweep ? declared.sweep->where : declared.where,
+            fmt::format("\"{}\" moves nothing of {}", printable_short(declared.sweep ? declared.sweep->value : ""),
+                        printable_short(bound.name)));
+      return false;
+    }
     if (bound.variable) return true;
     error(declared.sweep ? declared.sweep->where : declared.where,
           fmt::format("\"{}\" is no parameter of {} and no .param of the netlist",
                       printable_short(declared.sweep ? declared.sweep->value : std::string{}),
                       printable_short(bound.name)));
     return false;
+  }
+
+  // Whether a value of the sensor's own part depends on its parameter.
+  [[nodiscard]] bool moves_own(const BoundSensor& bound) const {
+    std::size_t first = bound.element.index();
+    std::size_t count = 1;
+    if (bound.instance.valid()) {
+      const auto& whole = circuit_.instances[bound.instance.index()];
+      first = whole.first_element, count = whole.element_count;
+    }
+    const auto own = std::span(circuit_.elements).subspan(first, count);
+    return std::any_of(own.begin(), own.end(), [&](const model::Element& element) {
+      return depends_on(circuit_.expressions, expression_of(element.part), *bound.variable);
+    });
   }
 
   void take_ends(BoundSensor& bound) {
@@ -128,10 +151,20 @@ class Binder {
     return bound.plus.valid() && bound.minus.valid();
   }
 
+  // A part of the netlist has its ends already; beside it, a second resistance would hang between the two nets.
+  bool is_free_label(const model::SensorDeclaration& declared) {
+    const bool element = index_.element(declared.name).valid();
+    if (!element && !index_.instance(declared.name).valid()) return true;
+    error(declared.where,
+          fmt::format("\"{}\" is an {} of the netlist: leave out \"between\", or give the sensor another name",
+                      printable_short(declared.name), element ? "element" : "instance"));
+    return false;
+  }
+
   // A resistance: the declared law stands in for whatever the netlist has between the two ends.
   bool bind_resistance(const model::SensorDeclaration& declared, BoundSensor& bound) {
     if (declared.between) {
-      if (!bind_between(declared, bound)) return false;
+      if (!is_free_label(declared) || !bind_between(declared, bound)) return false;
     } else if (!find_named(declared, bound) || !has_two_pins(declared, bound)) {
       return false;
     }
@@ -141,8 +174,10 @@ class Binder {
     }
     const std::size_t sensor = board_.sensors.size();
     remove(bound.element, bound.instance, sensor);
+    // Nothing can be solved before somebody gives it a value: at NaN none goes by unnoticed.
+    const model::Resistor unset{{std::numeric_limits<double>::quiet_NaN(), {}}};
     board_.extras.push_back(
-        {model::Resistor{}, bound.plus, bound.minus, model::BranchOrigin::sensor, sensor, bound.element, bound.name});
+        {unset, bound.plus, bound.minus, model::BranchOrigin::sensor, sensor, bound.element, bound.name});
     return true;
   }
 
@@ -151,8 +186,8 @@ class Binder {
                                                    : circuit_.instances[bound.instance.index()].pin_count;
     take_ends(bound);
     if (pins == 2) return true;
-    error(declared.where, fmt::format("sensor \"{}\" has {} pins; a {} has two", printable_short(bound.name), pins,
-                                      declared.kind.value));
+    error(declared.where, fmt::format("sensor \"{}\" has {} {}; a {} has two", printable_short(bound.name), pins,
+                                      pins == 1 ? "pin" : "pins", declared.kind.value));
     return false;
   }
 

@@ -5,23 +5,21 @@
 #include <unordered_map>
 #include <unordered_set>
 
-#include "model/expression.hpp"
+#include "divide/leaves.hpp"
 
 namespace divide {
 namespace {
 
-// Calls visit(net) and visit_source(element) for every leaf of a flat expression that looks at the circuit.
-void for_each_leaf(const model::ExpressionPool& pool, model::ExpressionId tree,
-                   const std::function<void(model::NetId)>& visit,
-                   const std::function<void(model::ElementId)>& visit_source) {
-  std::vector<model::ExpressionId> open{tree};
-  while (!open.empty()) {
-    const auto& node = pool[open.back()];
-    open.pop_back();
-    if (node.op == model::Op::net_volts) visit(model::NetId{node.index}), visit(model::NetId{node.index2});
-    if (node.op == model::Op::amperes) visit_source(model::ElementId{node.index});
-    for (std::size_t i = 0; i < node.argument_count; ++i) open.push_back(pool.argument(node, i));
-  }
+bool is_idle(const Graph& graph, Edge edge) {
+  for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
+    if (graph.pin_use(edge, i) != PinUse::nothing) return false;
+  return true;
+}
+
+bool conducts_at(const Graph& graph, Edge edge, Node node) {
+  for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
+    if (graph.pin(edge, i) == node && graph.pin_use(edge, i) == PinUse::conducts) return true;
+  return false;
 }
 
 class Collector {
@@ -29,10 +27,14 @@ class Collector {
   explicit Collector(const Graph& graph) : graph_(graph) {}
 
   Surroundings run(std::span<const Node> starts) {
-    for (const Node node : starts) meet(node);
-    for (std::size_t at = 0; at < found_.nodes.size(); ++at) {
-      const Node node = found_.nodes[at];
-      for (const Edge edge : graph_.edges_at(node)) look_at(edge, node);
+    // One start after the other: what the first one reaches was met from there.
+    std::size_t at = 0;
+    for (const Node start : starts) {
+      meet(start, start, no_edge);
+      for (; at < found_.nodes.size(); ++at) {
+        const Node node = found_.nodes[at];
+        for (const Edge edge : graph_.edges_at(node)) look_at(edge, node);
+      }
     }
     for (auto* list : {&found_.edges, &found_.idle}) {
       std::sort(list->begin(), list->end());
@@ -42,47 +44,44 @@ class Collector {
   }
 
  private:
-  void meet(Node node) {
-    if (!seen_nodes_.insert(node).second) return;
+  void meet(Node node, Node from, Edge through) {
+    if (!found_.met_through.emplace(node, Meeting{from, through}).second) return;
     (graph_.rails().ideal_at(node) != nullptr ? found_.rails : found_.nodes).push_back(node);
   }
 
   void look_at(Edge edge, Node node) {
-    bool conducts = false;
-    bool idle = true;
-    for (std::size_t i = 0; i < graph_.pin_count(edge); ++i) {
-      const PinUse use = graph_.pin_use(edge, i);
-      if (use != PinUse::nothing) idle = false;
-      if (graph_.pin(edge, i) == node && use == PinUse::conducts) conducts = true;
-    }
-    if (idle) found_.idle.push_back(edge);
-    if (conducts) take(edge);
+    if (is_idle(graph_, edge)) found_.idle.push_back(edge);
+    if (conducts_at(graph_, edge, node)) take(edge, node);
   }
 
   // A source whose current somebody measures. That of a rail feeds the whole board: no cut network can tell it.
-  void take_measured(model::ElementId source) {
+  void take_measured(model::ElementId source, Edge by, Node node) {
     if (graph_.rails().spent[source.index()])
-      found_.measures_rail_current = true;
-    else
-      take(source.value);
+      found_.measured_rails.push_back({by, source});
+    else if (seen_edges_.insert(source.value).second)
+      take_ends(source.value, node, by);
   }
 
-  void take(Edge edge) {
+  void take(Edge edge, Node node) {
     if (!seen_edges_.insert(edge).second) return;
-    found_.edges.push_back(edge);
-    for (std::size_t i = 0; i < graph_.pin_count(edge); ++i) meet(graph_.pin(edge, i));
+    take_ends(edge, node, edge);
     const model::Part& part = graph_.part(edge);
-    if (const auto* controlled = std::get_if<model::CurrentControlled>(&part)) take_measured(controlled->through);
+    if (const auto* controlled = std::get_if<model::CurrentControlled>(&part))
+      take_measured(controlled->through, edge, node);
     if (const auto* behavioural = std::get_if<model::Behavioural>(&part))
       for_each_leaf(
           graph_.circuit().expressions, behavioural->expression,
-          [&](model::NetId net) { meet(graph_.nodes().of(net)); },
-          [&](model::ElementId source) { take_measured(source); });
+          [&](model::NetId net) { meet(graph_.nodes().of(net), node, edge); },
+          [&](model::ElementId source) { take_measured(source, edge, node); });
+  }
+
+  void take_ends(Edge edge, Node from, Edge through) {
+    found_.edges.push_back(edge);
+    for (std::size_t i = 0; i < graph_.pin_count(edge); ++i) meet(graph_.pin(edge, i), from, through);
   }
 
   const Graph& graph_;
   Surroundings found_;
-  std::unordered_set<Node> seen_nodes_;
   std::unordered_set<Edge> seen_edges_;
 };
 
@@ -172,6 +171,37 @@ model::NodeId Built::node(Node node) const {
 model::BranchId Built::branch(Edge edge) const {
   const auto at = std::find_if(edges.begin(), edges.end(), [edge](const auto& entry) { return entry.first == edge; });
   return at != edges.end() ? at->second : model::BranchId{};
+}
+
+std::vector<const Rail*> rails_of(const Graph& graph, const Surroundings& around) {
+  std::vector<const Rail*> rails;
+  for (const auto* nodes : {&around.rails, &around.nodes})
+    for (const Node node : *nodes)
+      if (const Rail* rail = graph.rails().at(node)) rails.push_back(rail);
+  return rails;
+}
+
+std::vector<Edge> drawing_from(const Graph& graph, const Surroundings& around, Node node) {
+  std::unordered_set<Node> seen{node};
+  std::unordered_set<Edge> drawing;
+  std::vector<Node> open{node};
+  while (!open.empty()) {
+    const Node at = open.back();
+    open.pop_back();
+    if (graph.rails().ideal_at(at) != nullptr) continue;
+    for (const Edge edge : graph.edges_at(at)) {
+      const bool conducts = conducts_at(graph, edge, at);
+      if ((!conducts && !is_idle(graph, edge)) || !drawing.insert(edge).second || !conducts) continue;
+      for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
+        if (graph.pin_use(edge, i) == PinUse::conducts && seen.insert(graph.pin(edge, i)).second)
+          open.push_back(graph.pin(edge, i));
+    }
+  }
+  std::vector<Edge> found;
+  for (const auto* list : {&around.edges, &around.idle})
+    std::copy_if(list->begin(), list->end(), std::back_inserter(found),
+                 [&](Edge edge) { return drawing.contains(edge); });
+  return found;
 }
 
 Surroundings collect(const Graph& graph, std::span<const Node> starts) {

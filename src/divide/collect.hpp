@@ -3,6 +3,7 @@
 
 #include <optional>
 #include <span>
+#include <unordered_map>
 #include <vector>
 
 #include "divide/graph.hpp"
@@ -11,14 +12,34 @@
 
 namespace divide {
 
+// How a node was met: through an edge at another one. A start was met from itself, through no edge.
+struct Meeting {
+  Node from = 0;
+  Edge through = no_edge;
+};
+
+// A controlled source that follows the current of a source that makes a rail.
+struct MeasuredRail {
+  Edge by = 0;
+  model::ElementId source;
+};
+
 // All that current can reach from a node without passing an ideal rail.
 struct Surroundings {
-  std::vector<Node> nodes;             // without ideal rails; the start comes first
-  std::vector<Node> rails;             // ideal rails that were met
-  std::vector<Edge> edges;             // that conduct, in order
-  std::vector<Edge> idle;              // capacitors and parts without a model that touch a node
-  bool measures_rail_current = false;  // a controlled source follows the current of a source that makes a rail
+  std::vector<Node> nodes;  // without ideal rails; the start comes first
+  std::vector<Node> rails;  // ideal rails that were met
+  std::vector<Edge> edges;  // that conduct, in order
+  std::vector<Edge> idle;   // capacitors and parts without a model that touch a node
+  std::vector<MeasuredRail> measured_rails;
+  std::unordered_map<Node, Meeting> met_through;  // of every node, by the fewest edges from a start
 };
+
+// The rails that were met, those behind a resistance included.
+[[nodiscard]] std::vector<const Rail*> rails_of(const Graph& graph, const Surroundings& around);
+
+// The edges among them through which current from a node can flow, ideal rails not passed, and the idle ones at those
+// nodes.
+[[nodiscard]] std::vector<Edge> drawing_from(const Graph& graph, const Surroundings& around, Node node);
 
 // Sensed nets of controlled sources are followed too: what they measure counts.
 [[nodiscard]] Surroundings collect(const Graph& graph, std::span<const Node> starts);

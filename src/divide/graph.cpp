@@ -28,6 +28,7 @@ void Graph::index_edges() {
     for (Edge edge = 0; edge < edge_count; ++edge) {
       if (!is_extra(edge) && (board_.removed[edge] || rails_.spent[edge])) continue;
       const bool sensor = is_extra(edge) && extra(edge).sensor;
+      if (sensor && pin(edge, 0) == pin(edge, 1)) continue;  // shorted: it moves nothing
       if (!sensor && pin_count(edge) >= 2 && is_short(part(edge))) {
         visit(shorts_, pin(edge, 0), edge);
         continue;
@@ -74,6 +75,14 @@ PinUse Graph::pin_use(Edge edge, std::size_t i) const {
 std::string Graph::name(Edge edge) const {
   if (is_extra(edge)) return extra(edge).name;
   return std::string(index_.text(model::ElementId{edge}));
+}
+
+std::optional<model::Role> Graph::role(Edge edge) const {
+  if (element(edge).valid()) return board_.roles[element(edge).index()];
+  // A stand-in for an instance: the declaration gave its role to all that the instance holds.
+  const model::InstanceId instance = index_.instance(extra(edge).name);
+  if (!instance.valid() || circuit_.instances[instance.index()].element_count == 0) return std::nullopt;
+  return board_.roles[circuit_.instances[instance.index()].first_element];
 }
 
 std::uint32_t Graph::order(Edge edge) const {

@@ -3,6 +3,8 @@
 
 #include <array>
 #include <cstdint>
+#include <limits>
+#include <optional>
 #include <span>
 #include <string>
 #include <vector>
@@ -17,6 +19,7 @@ namespace divide {
 
 // An element of the circuit, or an extra of the sheet counted on from the last element.
 using Edge = std::uint32_t;
+inline constexpr Edge no_edge = std::numeric_limits<Edge>::max();
 
 // What current through a pin of a part means for the network around it.
 enum class PinUse : std::uint8_t { conducts, senses, nothing };
@@ -52,6 +55,9 @@ class Graph {
   [[nodiscard]] Node pin(Edge edge, std::size_t i) const;
   [[nodiscard]] PinUse pin_use(Edge edge, std::size_t i) const;
   [[nodiscard]] std::string name(Edge edge) const;
+
+  // What a declaration says of the part.
+  [[nodiscard]] std::optional<model::Role> role(Edge edge) const;
 
   // Place in the netlist's order, for lists of parts.
   [[nodiscard]] std::uint32_t order(Edge edge) const;

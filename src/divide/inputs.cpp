@@ -2,6 +2,9 @@
 
 #include <algorithm>
 #include <fmt/format.h>
+#include <limits>
+#include <set>
+#include <utility>
 
 #include "base/overloaded.hpp"
 #include "base/text.hpp"
@@ -57,8 +60,9 @@ class Inputs {
     const std::size_t count = inputs_.size() - before;
     if (converter.expect_inputs && static_cast<std::size_t>(converter.expect_inputs->value) != count)
       error(converter.expect_inputs->where,
-            fmt::format("converter \"{}\" has {} inputs here, {} are expected", printable_short(converter.name), count,
-                        converter.expect_inputs->value));
+            fmt::format("converter \"{}\" has {} {} here, {} {} expected", printable_short(converter.name), count,
+                        count == 1 ? "input" : "inputs", converter.expect_inputs->value,
+                        converter.expect_inputs->value == 1 ? "is" : "are"));
   }
 
   void take_input(const model::ConverterDeclaration& converter, const model::Declared<std::string>& wanted,
@@ -117,17 +121,27 @@ class Inputs {
     if (keys.offset_error) input.offset_error = keys.offset_error->value;
     if (keys.low) bind_end(*keys.low, input.low, input.nominal_low);
     if (keys.high) bind_end(*keys.high, input.high, input.nominal_high);
+    if (keys.supply) find_net(keys.supply->value, keys.supply->where);
+  }
+
+  // None, and an error once a place, where there is no such net: inputs share the keys of their converter.
+  model::NetId find_net(const std::string& name, source::Span where) {
+    const model::NetId net = index_.net(name);
+    if (net.valid()) return net;
+    const auto& begin = where.begin;
+    if (told_.emplace(begin.source.value, begin.offset).second)
+      error(where, fmt::format("no net \"{}\" in the netlist{}", printable_short(name), index_.suggest_net(name)));
+    return net;
   }
 
   // An end that is a rail has its nominal volts now; one inside a network gets them when that is solved.
   void bind_end(const model::Declared<model::RangeEnd>& end, model::BoundEnd& bound, double& nominal) {
     std::visit(base::overloaded{[&](double volts) { bound = nominal = volts; },
                                 [&](const std::string& net) {
-                                  const model::NetId id = index_.net(net);
-                                  if (!id.valid())
-                                    return error(end.where, fmt::format("no net \"{}\" in the netlist{}",
-                                                                        printable_short(net), index_.suggest_net(net)));
+                                  const model::NetId id = find_net(net, end.where);
+                                  if (!id.valid()) return;
                                   bound = id;
+                                  nominal = std::numeric_limits<double>::quiet_NaN();
                                   if (const Rail* rail = rails_.at(nodes_.of(id)))
                                     nominal = rail->has_volts ? rail->volts.value : rail->highest_volts;
                                 }},
@@ -141,6 +155,7 @@ class Inputs {
   source::Diagnostics& diagnostics_;
   std::vector<model::Input> inputs_;
   std::vector<model::ConverterKeys> keys_;
+  std::set<std::pair<std::uint32_t, std::uint32_t>> told_;  // places of names that are no net
 };
 
 }  // namespace

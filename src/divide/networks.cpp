@@ -26,16 +26,17 @@ std::vector<model::SweptBranch> swept_branches(const Subject& subject, const Bui
   const BoundSensor& bound = graph.board().sensors[subject.sensor->sensor];
   for (const auto& [edge, branch] : built.edges) {
     if (graph.is_extra(edge) && graph.extra(edge).sensor == subject.sensor->sensor)
-      swept.push_back({branch, model::SweptQuantity::ohms});
-    else if (bound.variable && depends_on(graph, expression_of(graph.part(edge)), *bound.variable))
-      swept.push_back({branch, model::SweptQuantity::value});
+      swept.push_back({branch, model::SweptQuantity::ohms, graph.name(edge)});
+    else if (bound.variable &&
+             depends_on(graph.circuit().expressions, expression_of(graph.part(edge)), *bound.variable))
+      swept.push_back({branch, model::SweptQuantity::value, graph.name(edge)});
   }
   for (const auto& [index, branch] : built.rails) {
     const Rail& rail = graph.rails().rails[index];
     if (rail.sensor == subject.sensor->sensor)
-      swept.push_back({branch, model::SweptQuantity::volts});
-    else if (bound.variable && depends_on(graph, rail.volts.residual, *bound.variable))
-      swept.push_back({branch, model::SweptQuantity::value});
+      swept.push_back({branch, model::SweptQuantity::volts, {}});
+    else if (bound.variable && depends_on(graph.circuit().expressions, rail.volts.residual, *bound.variable))
+      swept.push_back({branch, model::SweptQuantity::value, {}});
   }
   return swept;
 }

@@ -9,6 +9,8 @@
 #include "base/text.hpp"
 #include "divide/arms.hpp"
 #include "divide/networks.hpp"
+#include "divide/no_divider.hpp"
+#include "divide/ratiometric.hpp"
 #include "divide/sensors.hpp"
 #include "divide/walk.hpp"
 #include "model/finding.hpp"
@@ -23,7 +25,6 @@ class OneInput {
   OneInput(const InputRequest& request, const model::Input& input)
       : request_(request), graph_(request.graph), pin_(graph_.nodes().of(input.net)) {
     found_.input = input;
-    found_.tap = input.net;
   }
 
   model::Divider run() {
@@ -32,12 +33,19 @@ class OneInput {
       return std::move(found_);
     }
     around_ = collect(graph_, starts());
+    drawing_ = drawing_from(graph_, around_, pin_);
     for (const Node node : around_.nodes)
       for (const model::NetId net : graph_.nodes().nets(node)) found_.nets.push_back(net);
     note_obstacles();
     const bool has_rail = reaches_rail();
-    if (!has_rail) found_.no_divider = "no resistive way leads from it to a rail";
-    if (has_rail && choose_sensor()) split();
+    if (!has_rail)
+      found_.no_divider = "no resistive way leads from it to a rail" + missing_rail(graph_, drawing_, pin_);
+    else if (!is_driven(graph_, drawing_))
+      found_.no_divider = "its network reaches no rail but 0" + missing_rail(graph_, drawing_, pin_);
+    else if (choose_sensor())
+      split();
+    else if (found_.no_sensor)
+      name_fixed_arms();
     build_networks();
     return std::move(found_);
   }
@@ -63,61 +71,75 @@ class OneInput {
     for (std::string& why :
          obstacles(graph_, around_, found_.unmodelled, request_.broken, request_.netlist, request_.sources))
       refuse(std::move(why));
-    if (around_.measures_rail_current)
-      refuse("a source in its network follows the current of a source that makes a rail");
-    for (const Node node : around_.rails)
-      if (const Rail* rail = graph_.rails().at(node); !rail->conflict.empty()) refuse(rail->conflict);
+    for (const MeasuredRail& measured : around_.measured_rails)
+      refuse(fmt::format(
+          "{} follows the current of {}, which feeds a whole rail: let it follow a source of 0 V in the "
+          "branch that it means",
+          printable_short(graph_.name(measured.by)), printable_short(graph_.names().text(measured.source))));
     std::unordered_set<std::uint32_t> here;
     for (const Edge edge : around_.edges) here.insert(graph_.element(edge).value);
+    for (const Rail* rail : rails_of(graph_, around_)) {
+      if (!rail->conflict.empty()) refuse(rail->conflict);
+      for (const model::ElementId source : rail->sources) here.insert(source.value);
+    }
     for (const auto& suspect : graph_.circuit().suspects)
       if (here.contains(suspect.element.value)) found_.suspects.push_back(suspect);
   }
 
   // Whether there is one sensor and a walk from it to the pin.
   bool choose_sensor() {
-    const auto sensors = sensors_in(graph_, around_, pin_);
-    std::vector<std::size_t> walked;
-    for (const std::size_t sensor : sensors) {
-      auto edge = sensor_edge(graph_, around_, sensor);
-      if (!edge || (!edge->is_rail && edge->plus == edge->minus)) continue;  // a shorted one moves nothing
-      auto walk = find_walk(graph_, *edge, pin_);
-      if (!walk) continue;
-      walked.push_back(sensor);
-      edge_ = std::move(edge);
-      walk_ = std::move(walk);
-    }
-    prefer_resistance(walked);
-    if (walked.size() > 1) {
-      std::vector<std::string> names;
-      for (const std::size_t sensor : walked) names.push_back(printable_short(graph_.board().sensors[sensor].name));
-      refuse(fmt::format("{} sensors move it ({}); this version sweeps one", walked.size(), fmt::join(names, ", ")));
-      return false;
-    }
-    found_.no_sensor = walked.empty();
-    if (walked.empty()) return false;
-    const BoundSensor& bound = graph_.board().sensors[walked.front()];
+    auto movers = movers_of(graph_, around_, pin_);
+    drop_cancelling(movers);
+    found_.no_sensor = movers.empty();
+    if (movers.empty()) return false;
+    if (movers.size() > 1) return refuse_several(movers), false;
+    Mover& only = movers.front();
+    if (!only.walk) return refuse_unwalked(only), false;
+    edge_ = std::move(only.edge);
+    walk_ = std::move(only.walk);
+    const BoundSensor& bound = graph_.board().sensors[only.sensor];
     found_.sensor = bound.declaration;
     found_.sensor_name = bound.name;
     return true;
   }
 
-  // A swept rail behind a divider's load, or one with a voltage at rest above the sensor's arm, gives way to a
-  // resistance.
-  void prefer_resistance(std::vector<std::size_t>& walked) {
-    const auto is_rail = [this](std::size_t sensor) {
-      return graph_.board().sensors[sensor].kind->moves == sensor::Moves::rail;
-    };
-    if (walked.size() < 2 ||
-        std::count_if(walked.begin(), walked.end(), is_rail) + 1 != static_cast<std::ptrdiff_t>(walked.size()))
+  [[nodiscard]] const Rail* rail_swept_by(const Mover& mover) const {
+    const auto& rails = graph_.rails().rails;
+    const auto at =
+        std::find_if(rails.begin(), rails.end(), [&](const Rail& rail) { return rail.sensor == mover.sensor; });
+    return at == rails.end() ? nullptr : &*at;
+  }
+
+  // A resistance on a rail that a monitor sweeps and that is the range too reads the same wherever the rail stands.
+  void drop_cancelling(std::vector<Mover>& movers) {
+    if (movers.size() != 2) return;
+    for (std::size_t i : {std::size_t{0}, std::size_t{1}}) {
+      const Rail* rail = rail_swept_by(movers[i]);
+      if (rail == nullptr) continue;
+      const auto& sweep = request_.sheet.sensors[graph_.board().sensors[movers[i].sensor].declaration];
+      const auto share = leakage_share(graph_, around_, found_.input, *rail, sweep);
+      if (!share) continue;
+      leakage_share_ = *share;
+      movers.erase(movers.begin() + static_cast<std::ptrdiff_t>(i));
       return;
-    const auto resistance = std::find_if_not(walked.begin(), walked.end(), is_rail);
-    edge_ = sensor_edge(graph_, around_, *resistance);
-    walk_ = find_walk(graph_, *edge_, pin_);
-    const Arms arms = arms_of_walk();
-    const Sides sides = sort_sides(graph_, *edge_, *walk_, arms);
-    for (const Rail* rail : {sides.upper_rail, sides.lower_rail})
-      if (rail != nullptr && rail->sensor && !rail->has_volts) return;
-    walked = {*resistance};
+    }
+  }
+
+  void refuse_several(const std::vector<Mover>& movers) {
+    std::vector<std::string> names;
+    for (const Mover& mover : movers)
+      names.push_back(printable_short(graph_.board().sensors[mover.sensor].name) +
+                      (mover.walk ? std::string{} : way_in(graph_, around_, pin_, mover.sensor)));
+    refuse(
+        fmt::format("{} sensors move it ({}); this version sweeps one: leave out the [sensor.NAME] of those that may "
+                    "stand still at the netlist's values",
+                    movers.size(), fmt::join(names, ", ")));
+  }
+
+  void refuse_unwalked(const Mover& mover) {
+    refuse(fmt::format("sensor {} moves it{}; this version follows a sensor along resistances to the pin only",
+                       printable_short(graph_.board().sensors[mover.sensor].name),
+                       way_in(graph_, around_, pin_, mover.sensor)));
   }
 
   [[nodiscard]] const model::SensorDeclaration& declaration() const {
@@ -140,12 +162,37 @@ class OneInput {
     std::size_t candidates = 0;
     for (const auto& off : walk_->off)
       candidates +=
-          std::any_of(off.begin(), off.end(), [](const OffWalk& branch) { return branch.reaches_rail; }) ? 1U : 0U;
-    const Weigh weigh = candidates > 1 ? weigher(subject(), declaration()) : [](std::span<const Edge>) { return 0.0; };
-    return choose_arms(graph_, *walk_, ambiguous_share(), weigh);
+          std::any_of(off.begin(), off.end(), [](const OffWalk& branch) { return branch.whole.reaches_rail(); }) ? 1U
+                                                                                                                 : 0U;
+    const Weigh weigh = candidates > 1
+                            ? weigher(subject(), found_.no_sensor ? model::SensorDeclaration{} : declaration())
+                            : [](std::span<const Edge>) { return 0.0; };
+    return choose_arms(graph_, *edge_, *walk_, ambiguous_share(), weigh);
+  }
+
+  // What nothing moves is a divider between rails all the same: seen from the highest rail in reach.
+  void name_fixed_arms() {
+    const Rail* top = nullptr;
+    for (const Node node : resistive_reach(graph_, pin_))
+      if (const Rail* rail = graph_.rails().at(node);
+          rail != nullptr && (top == nullptr || rail->highest_volts > top->highest_volts))
+        top = rail;
+    if (top == nullptr) return;
+    edge_ = SensorEdge{0, true, top->node, top->node, {}};
+    walk_ = find_walk(graph_, *edge_, pin_);
+    if (!walk_) return;
+    arms_ = arms_of_walk();
+    name_parts(sort_sides(graph_, *edge_, *walk_, *arms_));
+    found_.sensor_arm.reset();
+    found_.tap = tap_net();
   }
 
   void split() {
+    if (const std::string why = dead_end(graph_, around_, *edge_, *walk_); !why.empty()) {
+      refuse(why);
+      found_.sensor.reset();
+      return;
+    }
     arms_ = arms_of_walk();
     const Sides sides = sort_sides(graph_, *edge_, *walk_, *arms_);
     const bool fed_by_current = std::any_of(arms_->edges.begin(), arms_->edges.end(), [this](Edge edge) {
@@ -155,6 +202,7 @@ class OneInput {
       found_.no_divider = sides.upper_rail == nullptr ? std::string("its arms lead to no rail")
                                                       : fmt::format("both its arms lead to one rail, {}",
                                                                     printable_short(sides.upper_rail->name));
+      found_.no_divider += missing_rail(graph_, drawing_, pin_);
       found_.sensor.reset();
       return;
     }
@@ -183,10 +231,11 @@ class OneInput {
     placed.insert(arms_->sense.begin(), arms_->sense.end());
     placed.insert(edge_->edges.begin(), edge_->edges.end());
     std::vector<Edge> load;
-    for (const Edge edge : around_.edges)
-      if (!placed.contains(edge)) load.push_back(edge);
-    for (const Edge edge : around_.idle)
-      if (std::holds_alternative<model::Capacitor>(graph_.part(edge))) load.push_back(edge);
+    for (const Edge edge : drawing_) {
+      const bool idle = graph_.pin_use(edge, 0) == PinUse::nothing;
+      if (!placed.contains(edge) && (!idle || std::holds_alternative<model::Capacitor>(graph_.part(edge))))
+        load.push_back(edge);
+    }
     found_.load = list(load, false);
   }
 
@@ -224,33 +273,22 @@ class OneInput {
     const Subject whole = subject();
     const bool solved = found_.sensor && found_.no_divider.empty();
     if (!solved) return;
-    found_.whole = whole_network(whole);
     if (!check_rails()) return;
+    found_.whole = whole_network(whole);
+    for (double& amperes : found_.whole.leakage_amperes) amperes *= leakage_share_;
     const Node tap = walk_->nodes[arms_->tap];
     found_.bare = bare_network(whole, arms_->edges, tap);
     found_.sensor_form = sensor_form(whole, arms_->edges, tap);
     if (found_.bare.network.linear) found_.bare_form = found_.sensor_form;
   }
 
-  // Rails that another sensor sweeps stand at their voltage at rest; where nobody says which, nothing can be solved.
+  // A rail of which nobody says at what it stands leaves nothing to solve.
   bool check_rails() {
-    for (const Node node : around_.rails) {
-      const Rail* rail = graph_.rails().at(node);
-      const bool moved = edge_->is_rail && node == edge_->plus;
-      if (rail->has_volts || moved) continue;
+    for (const Rail* rail : rails_of(graph_, around_)) {
+      if (rail->has_volts || (edge_->is_rail && rail->node == edge_->plus)) continue;
       refuse(fmt::format("rail {} has no voltage: declare [rail.\"{}\"] volts", printable_short(rail->name),
                          printable_short(rail->name)));
       return false;
-    }
-    for (const auto& branch : found_.whole.network.branches) {
-      const model::ExpressionId tree = expression_of(branch.part);
-      const auto& bound = graph_.board().sensors[edge_->sensor];
-      for (const auto& swept : graph_.circuit().swept)
-        if (swept.found && bound.variable != swept.variable && depends_on(graph_, tree, swept.variable)) {
-          refuse(fmt::format("it also depends on the parameter of sensor {}; this version sweeps one",
-                             printable_short(swept.sensor)));
-          return false;
-        }
     }
     return true;
   }
@@ -260,9 +298,11 @@ class OneInput {
   Node pin_;
   model::Divider found_;
   Surroundings around_;
+  std::vector<Edge> drawing_;  // the pin's own part of them
   std::optional<SensorEdge> edge_;
   std::optional<Walk> walk_;
   std::optional<Arms> arms_;
+  double leakage_share_ = 1;  // as in ratiometric.hpp
 };
 
 }  // namespace

@@ -3,8 +3,10 @@
 #include <algorithm>
 #include <cmath>
 #include <fmt/format.h>
+#include <unordered_set>
 
 #include "base/text.hpp"
+#include "divide/leaves.hpp"
 
 namespace divide {
 namespace {
@@ -87,17 +89,45 @@ class Finder {
     rail.highest_volts = std::fabs(from) > std::fabs(to) ? from : to;
   }
 
-  // Sources from a rail to a node make that node a rail, until nothing changes.
+  // The sources whose current something follows.
+  [[nodiscard]] std::unordered_set<std::uint32_t> measured() const {
+    std::unordered_set<std::uint32_t> found;
+    for (std::size_t i = 0; i < circuit_.elements.size(); ++i) {
+      if (board_.removed[i]) continue;
+      const model::Part& part = circuit_.elements[i].part;
+      if (const auto* controlled = std::get_if<model::CurrentControlled>(&part))
+        found.insert(controlled->through.value);
+      if (const auto* behavioural = std::get_if<model::Behavioural>(&part))
+        for_each_leaf(
+            circuit_.expressions, behavioural->expression, [](model::NetId) {},
+            [&](model::ElementId source) { found.insert(source.value); });
+    }
+    return found;
+  }
+
+  // Sources from a rail to a node make that node a rail, until nothing changes. An ammeter (0 V, its current followed)
+  // stays a branch: only there can its current be told.
   void follow_sources() {
+    const auto followed = measured();
     std::vector<std::size_t> open;
-    for (std::size_t i = 0; i < circuit_.elements.size(); ++i)
-      if (!board_.removed[i] && std::holds_alternative<model::VoltageSource>(circuit_.elements[i].part))
-        open.push_back(i);
+    for (std::size_t i = 0; i < circuit_.elements.size(); ++i) {
+      if (board_.removed[i]) continue;
+      const auto* source = std::get_if<model::VoltageSource>(&circuit_.elements[i].part);
+      if (source == nullptr) continue;
+      const bool ammeter = source->volts.fixed() && source->volts.value == 0 && followed.contains(id_of(i).value);
+      if (!ammeter || joins_rails(i)) open.push_back(i);
+    }
     for (bool changed = true; changed;) {
       changed = false;
       const auto done = std::remove_if(open.begin(), open.end(), [&](std::size_t i) { return follow(i, changed); });
       open.erase(done, open.end());
     }
+  }
+
+  // A declared rail on either side stays one, ammeter or not.
+  [[nodiscard]] bool joins_rails(std::size_t i) const {
+    const auto& element = circuit_.elements[i];
+    return found_.of[nodes_.of(circuit_.pin(element, 0))] && found_.of[nodes_.of(circuit_.pin(element, 1))];
   }
 
   // Whether the source is used up.
@@ -121,10 +151,14 @@ class Finder {
     Rail& rail = add(next, std::string(index_.text(first_net(next))));
     rail.volts =
         volts.fixed() ? model::Number{base.volts.value + (plus_known ? -volts.value : volts.value), {}} : volts;
+    rail.sources = base.sources;
+    rail.sources.push_back(id_of(i));
     found_.spent[i] = 1;
     changed = true;
     return true;
   }
+
+  static model::ElementId id_of(std::size_t i) { return model::ElementId{static_cast<std::uint32_t>(i)}; }
 
   [[nodiscard]] model::NetId first_net(Node node) const { return nodes_.nets(node).front(); }
 
@@ -140,6 +174,7 @@ class Finder {
     if (!silent.has_volts && volts.fixed()) {  // swept, and the netlist says where it stands at rest
       silent.has_volts = true;
       silent.volts.value = &silent == &upper ? lower.volts.value + volts.value : upper.volts.value - volts.value;
+      silent.sources.push_back(id_of(i));
       return;
     }
     const bool from_declaration = *found_.of[plus] < declared_ && *found_.of[minus] < declared_;
@@ -151,8 +186,7 @@ class Finder {
       return;
     Rail& blamed = plus == 0 ? lower : upper;
     blamed.conflict = fmt::format("{} and another source hold {} at different voltages",
-                                  printable_short(index_.text(model::ElementId{static_cast<std::uint32_t>(i)})),
-                                  printable_short(blamed.name));
+                                  printable_short(index_.text(id_of(i))), printable_short(blamed.name));
   }
 
   const model::Circuit& circuit_;

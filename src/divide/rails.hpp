@@ -15,13 +15,14 @@ namespace divide {
 
 struct Rail {
   Node node = 0;
-  std::string name;                   // the net, as the netlist first spells it; "0" for ground
-  model::Number volts;                // nominal; a residual where a swept parameter sets it
-  bool has_volts = true;              // false: only a sensor of kind "voltage" says what it is at
-  double ohms = 0;                    // between the ideal source and the node
-  std::optional<std::size_t> sensor;  // that sweeps it, in Board::sensors
-  double highest_volts = 0;           // over its sweep: tells an upper rail from a lower one
-  std::string conflict;               // two sources that disagree; empty where none do
+  std::string name;                       // the net, as the netlist first spells it; "0" for ground
+  model::Number volts;                    // nominal; a residual where a swept parameter sets it
+  bool has_volts = true;                  // false: only a sensor of kind "voltage" says what it is at
+  double ohms = 0;                        // between the ideal source and the node
+  std::optional<std::size_t> sensor;      // that sweeps it, in Board::sensors
+  double highest_volts = 0;               // over its sweep: tells an upper rail from a lower one
+  std::string conflict;                   // two sources that disagree; empty where none do
+  std::vector<model::ElementId> sources;  // of the netlist, whose sum the volts are; none where they are declared
 };
 
 struct Rails {

@@ -1,4 +1,4 @@
-// Which sensor moves an input, and how its walk sees it.
+// Which sensors move the network of an input, and how a walk sees them.
 #pragma once
 
 #include <optional>
@@ -7,21 +7,32 @@
 
 #include "divide/collect.hpp"
 #include "divide/graph.hpp"
+#include "divide/leaves.hpp"
 #include "divide/walk.hpp"
 
 namespace divide {
 
-// The sensors of the sheet that are part of these surroundings: those of resistances by their edges, those of
-// parameters by what depends on them, those of rails by a resistive way to the rail from the input's node.
-[[nodiscard]] std::vector<std::size_t> sensors_in(const Graph& graph, const Surroundings& around, Node pin);
+// What a sensor changes in some surroundings: a resistance, whatever depends on its parameter, a rail that it sweeps.
+struct Changes {
+  std::vector<Edge> edges;
+  std::vector<Node> rails;
 
-// A sensor as one edge. Nothing where it has no two ends (a parameter that moves no resistance here).
-[[nodiscard]] std::optional<SensorEdge> sensor_edge(const Graph& graph, const Surroundings& around, std::size_t sensor);
+  [[nodiscard]] bool none() const { return edges.empty() && rails.empty(); }
+};
+[[nodiscard]] Changes changes_by(const Graph& graph, const Surroundings& around, std::size_t sensor);
 
-// Whether an expression of the flat circuit depends on a swept parameter; an invalid tree does not.
-[[nodiscard]] bool depends_on(const Graph& graph, model::ExpressionId tree, std::uint32_t variable);
+// A sensor that changes something in the surroundings of an input.
+struct Mover {
+  std::size_t sensor = 0;  // in Board::sensors
+  std::optional<SensorEdge> edge;
+  std::optional<Walk> walk;  // none: it acts on the input otherwise than along resistances from its own ends to the pin
+};
 
-// The expression of a part's value, where it has no number yet; none for others.
-[[nodiscard]] model::ExpressionId expression_of(const model::Part& part);
+// All of them, in the order of declaration. Of several that share one parameter, those with a walk.
+[[nodiscard]] std::vector<Mover> movers_of(const Graph& graph, const Surroundings& around, Node pin);
+
+// Where the influence of a sensor comes in that has no walk: "through G1", "through rail VCC". Empty where that has no
+// name.
+[[nodiscard]] std::string way_in(const Graph& graph, const Surroundings& around, Node pin, std::size_t sensor);
 
 }  // namespace divide

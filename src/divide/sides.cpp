@@ -25,9 +25,13 @@ class Sorter {
       sides_.sensor_arm = side_of(sensor_.plus, sensor_.minus, side_beyond());
     else
       sides_.sensor_arm = side_of_rail(sensor_.plus);
+    note_branches();
     for (const Edge edge : arms_.edges) {
+      const auto branch = of_branch_.find(edge);
       const model::Arm arm = is_source(edge) ? side_of_source(edge)
-                                             : side_of(graph_.pin(edge, 0), graph_.pin(edge, 1), *sides_.sensor_arm);
+                             : branch != of_branch_.end()
+                                 ? branch->second
+                                 : side_of(graph_.pin(edge, 0), graph_.pin(edge, 1), *sides_.sensor_arm);
       (arm == model::Arm::upper ? sides_.upper : sides_.lower).push_back(edge);
     }
     return std::move(sides_);
@@ -72,6 +76,17 @@ class Sorter {
     }
   }
 
+  // A branch off the walk that leads to one rail is on that rail's side, whatever its node's piece touches.
+  void note_branches() {
+    for (std::size_t i = 0; i <= arms_.tap; ++i)
+      for (const OffWalk& off : walk_.off[i]) {
+        const auto& rails = off.kept.rails;
+        if (rails.empty() || !std::all_of(rails.begin(), rails.end(), [&](Node rail) { return rail == rails.front(); }))
+          continue;
+        for (const Edge edge : off.kept.edges) of_branch_.emplace(edge, side_of_rail(rails.front()));
+      }
+  }
+
   // Ties are settled by the order of nodes, so that a report does not depend on addresses.
   static bool higher(const Rail* a, const Rail* b) {
     return a->highest_volts != b->highest_volts ? a->highest_volts > b->highest_volts : a->node > b->node;
@@ -103,10 +118,7 @@ class Sorter {
 
   // Where a sensor between two inner nodes leads at its far end.
   model::Arm side_beyond() {
-    for (const Edge edge : walk_.behind_sensor)
-      for (const std::size_t i : {std::size_t{0}, std::size_t{1}})
-        if (const Rail* rail = graph_.rails().at(graph_.pin(edge, i))) return side_of_rail(rail);
-    return model::Arm::lower;
+    return walk_.behind_sensor.reaches_rail() ? side_of_rail(walk_.behind_sensor.rails.front()) : model::Arm::lower;
   }
 
   const Graph& graph_;
@@ -115,6 +127,7 @@ class Sorter {
   const Arms& arms_;
   Node tap_;
   Sides sides_;
+  std::unordered_map<Edge, model::Arm> of_branch_;
   std::unordered_map<Node, Node> parent_;
   std::unordered_map<Node, std::unordered_set<const Rail*>> touched_;  // by piece
   std::unordered_set<const Rail*> rails_;

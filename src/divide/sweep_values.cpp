@@ -29,8 +29,9 @@ base::Result<std::vector<double>> ohms_of(const model::SensorDeclaration& sensor
   return ohms;
 }
 
-base::Result<std::vector<double>> expression_values(const model::Branch& branch, const model::Circuit& circuit,
-                                                    std::span<const double> at) {
+base::Result<std::vector<double>> expression_values(const model::Branch& branch, const std::string& part,
+                                                    const model::Circuit& circuit, std::span<const double> at) {
+  const std::string name = part.empty() ? "a rail" : base::printable_short(part);
   const model::ExpressionId tree = expression_of(branch.part);
   const bool resistance = std::holds_alternative<model::Resistor>(branch.part);
   double x = 0;
@@ -42,12 +43,12 @@ base::Result<std::vector<double>> expression_values(const model::Branch& branch,
     x = measurand;
     const auto value = expression::evaluate(circuit.expressions, tree, leaves);
     if (const auto* trouble = std::get_if<expression::Trouble>(&value))
-      return base::Error{
-          fmt::format("its expression has no value at {}: {}", base::number_text(measurand), trouble->message)};
+      return base::Error{fmt::format("the expression of {} has no value at {}: {}", name, base::number_text(measurand),
+                                     trouble->message)};
     const double number = std::get<double>(value);
     if (resistance && number <= 0)
-      return base::Error{
-          fmt::format("its resistance is {} at {}", base::si_text(number, "ohm"), base::number_text(measurand))};
+      return base::Error{fmt::format("the resistance of {} is {} at {}", name, base::si_text(number, "ohm"),
+                                     base::number_text(measurand))};
     values.push_back(number);
   }
   return values;
@@ -59,8 +60,8 @@ base::Result<model::SweptValues> values_of(const model::SweptBranch& swept, cons
   const model::Branch& branch = probed.network.branches[swept.branch.index()];
   model::SweptValues out{swept.branch, std::holds_alternative<model::Behavioural>(branch.part), {at.begin(), at.end()}};
   if (swept.quantity == model::SweptQuantity::volts || out.is_variable) return out;
-  auto values =
-      swept.quantity == model::SweptQuantity::ohms ? ohms_of(sensor, at) : expression_values(branch, circuit, at);
+  auto values = swept.quantity == model::SweptQuantity::ohms ? ohms_of(sensor, at)
+                                                             : expression_values(branch, swept.part, circuit, at);
   if (!values.ok()) return base::Error{values.error()};
   out.values = std::move(values).value();
   return out;
@@ -82,7 +83,7 @@ bool freeze(model::Network& network, const model::Circuit& circuit, double at) {
   for (model::Branch& branch : network.branches) {
     model::Number* const number = number_of(branch.part);
     if (number == nullptr || number->fixed()) continue;
-    const auto values = expression_values(branch, circuit, {&at, 1});
+    const auto values = expression_values(branch, {}, circuit, {&at, 1});
     if (!values.ok()) return false;
     *number = {values->front(), {}};
   }

@@ -81,11 +81,13 @@ std::vector<std::string> card_sentences(const std::set<model::CardId>& cards, co
 
 }  // namespace
 
-bool is_taken_as_open(std::string_view name) {
+bool is_taken_as_open(std::string_view name, char letter) {
   constexpr std::array<std::string_view, 5> open_classes{"j", "p", "tp", "c", "d"};
   const std::string_view own = last_component(name);
   const auto end = std::find_if_not(own.begin(), own.end(), is_letter);
-  const std::string letters = base::folded(own.substr(0, static_cast<std::size_t>(end - own.begin())));
+  std::string letters = base::folded(own.substr(0, static_cast<std::size_t>(end - own.begin())));
+  // An instance card is XJ1 where the connector is J1.
+  if (letter == 'x' && letters.size() > 1 && letters.front() == 'x') letters.erase(0, 1);
   return std::find(open_classes.begin(), open_classes.end(), letters) != open_classes.end();
 }
 
@@ -101,7 +103,7 @@ std::vector<model::UnmodelledTouch> find_touches(const Graph& graph, const Surro
     for (std::size_t i = 0; i < part.pin_count; ++i) {
       const model::NetId net = graph.circuit().pin(part, i);
       if (!nodes.contains(graph.nodes().of(net))) continue;
-      touches.push_back({element, net, is_taken_as_open(graph.names().text(element))});
+      touches.push_back({element, net, is_taken_as_open(graph.names().text(element), part.letter)});
       break;
     }
   }

@@ -16,8 +16,9 @@
 namespace divide {
 
 // Whether a part without a model may be taken as open, by its reference designator's class letters (IEEE 315: J and P
-// connectors, TP test points, C capacitors, D diodes and clamp arrays).
-[[nodiscard]] bool is_taken_as_open(std::string_view name);
+// connectors, TP test points, C capacitors, D diodes and clamp arrays). The letter is that of its card: an instance's
+// own X stands before the class letters.
+[[nodiscard]] bool is_taken_as_open(std::string_view name, char letter);
 
 // Parts without a model that touch a node of the network; declared converters are left out.
 [[nodiscard]] std::vector<model::UnmodelledTouch> find_touches(const Graph& graph, const Surroundings& around);

@@ -32,7 +32,9 @@ class Walker {
  private:
   // A rail behind a resistance bounds arms as an ideal one does: what else hangs on it is no part of them.
   [[nodiscard]] bool is_rail(Node node) const { return graph_.rails().at(node) != nullptr; }
-  [[nodiscard]] bool is_way(Edge edge) const { return graph_.is_way(edge) && !own_.contains(edge); }
+  [[nodiscard]] bool is_load(Edge edge) const { return graph_.role(edge) == model::Role::load; }
+  [[nodiscard]] bool is_way(Edge edge) const { return graph_.is_way(edge) && !own_.contains(edge) && !is_load(edge); }
+  [[nodiscard]] bool feeds(Edge edge) const { return graph_.feeds(edge) && !own_.contains(edge); }
 
   // Breadth first from the pin; a swept rail may be entered, other ideal rails may not.
   void spread() {
@@ -80,60 +82,68 @@ class Walker {
     const Node far = sensor_.plus == start ? sensor_.minus : sensor_.plus;
     if (is_rail(far) || on_walk_.contains(far)) return;
     walk_.far_end = far;
-    std::unordered_set<Edge> taken;
-    std::unordered_set<Node> seen{far};
-    std::vector<Node> open{far};
-    while (!open.empty()) {
-      const Node node = open.back();
-      open.pop_back();
-      for (const Edge edge : graph_.edges_at(node)) {
-        if (!graph_.feeds(edge) || own_.contains(edge) || !taken.insert(edge).second) continue;
-        walk_.behind_sensor.push_back(edge);
-        const Node next = graph_.other_end(edge, node);
-        if (!is_rail(next) && !on_walk_.contains(next) && seen.insert(next).second) open.push_back(next);
-      }
-    }
+    walk_.behind_sensor = explore({}, far, false);
   }
 
   [[nodiscard]] std::vector<OffWalk> off_walk(Node node) const {
     std::vector<OffWalk> found;
-    if (graph_.rails().ideal_at(node) != nullptr) return found;
+    if (is_rail(node)) return found;
     for (const Edge edge : graph_.edges_at(node)) {
-      if (!graph_.feeds(edge) || own_.contains(edge) || walk_edges_.contains(edge)) continue;
+      if (!feeds(edge) || walk_edges_.contains(edge)) continue;
       const bool listed =
           std::any_of(found.begin(), found.end(), [edge](const OffWalk& off) { return off.edge == edge; });
-      if (!listed) found.push_back(explore(edge, node));
+      if (!listed) found.push_back(branch(edge, node));
     }
     return found;
   }
 
-  [[nodiscard]] OffWalk explore(Edge first, Node node) const {
-    OffWalk off;
-    off.edge = first;
+  [[nodiscard]] OffWalk branch(Edge first, Node node) const {
+    OffWalk off{first, explore(first, node, true), {}};
+    const auto& edges = off.whole.edges;
+    if (std::none_of(edges.begin(), edges.end(), [this](Edge edge) { return is_load(edge); }))
+      off.kept = off.whole;
+    else if (!is_load(first))
+      off.kept = explore(first, node, false);
+    return off;
+  }
+
+  // All that an edge at a node leads to, or that the node leads to where no edge is given.
+  [[nodiscard]] Region explore(std::optional<Edge> first, Node node, bool with_load) const {
+    Region region;
     std::unordered_set<Edge> taken;
-    std::unordered_set<Node> seen;
-    std::vector<std::pair<Edge, Node>> open{{first, node}};
+    std::unordered_set<Node> seen{node};
+    std::vector<std::pair<Edge, Node>> open;
+    const auto push_all = [&](Node at) {
+      for (const Edge edge : graph_.edges_at(at))
+        if (feeds(edge) && (with_load || !is_load(edge))) open.emplace_back(edge, at);
+    };
+    if (first)
+      open.emplace_back(*first, node);
+    else
+      push_all(node);
     while (!open.empty()) {
       const auto [edge, from] = open.back();
       open.pop_back();
       if (!taken.insert(edge).second) continue;
-      off.region.push_back(edge);
+      region.edges.push_back(edge);
       const Node next = graph_.other_end(edge, from);
-      if (is_rail(next))
-        off.reaches_rail = true;
-      else if (on_walk_.contains(next))
-        off.returns.push_back(next);
-      else if (walk_.far_end && next == *walk_.far_end)
-        off.reaches_sensor_far_end = true;
-      else if (seen.insert(next).second)
-        push_ways(next, taken, open);
+      if (note_bound(next, region) || !seen.insert(next).second) continue;
+      push_all(next);
     }
-    return off;
+    return region;
   }
 
-  void push_ways(Node node, const std::unordered_set<Edge>& taken, std::vector<std::pair<Edge, Node>>& open) const {
-    for (const Edge edge : graph_.edges_at(node))
-      if (graph_.feeds(edge) && !own_.contains(edge) && !taken.contains(edge)) open.emplace_back(edge, node);
+  // Whether a node ends a region; says so there.
+  bool note_bound(Node node, Region& region) const {
+    if (is_rail(node))
+      region.rails.push_back(node);
+    else if (on_walk_.contains(node))
+      region.returns.push_back(node);
+    else if (walk_.far_end && node == *walk_.far_end)
+      region.reaches_sensor_far_end = true;
+    else
+      return false;
+    return true;
   }
 
   const Graph& graph_;

@@ -31,8 +31,8 @@ struct Input {
   int bits = 0;
   BoundEnd low = 0.0;
   BoundEnd high = 0.0;
-  double nominal_low = 0;  // volts
-  double nominal_high = 0;
+  double nominal_low = 0;   // volts; NaN: the end is a net whose volts are not known before its network is solved
+  double nominal_high = 0;  // likewise
   double gain = 1;
   double leakage = 0;  // A, either sign
   std::optional<double> input_resistance;
@@ -61,6 +61,7 @@ struct TapCandidate {
   bool arm = false;
   bool declared = false;  // a declared role settled it
   std::vector<PartName> branches;
+  bool only_way = false;  // an arm though its weight is below the limit: no other leads to a second rail
 };
 
 // What the plan overrides at each point of the sweep.
@@ -72,6 +73,7 @@ enum class SweptQuantity : std::uint8_t {
 struct SweptBranch {
   BranchId branch;
   SweptQuantity quantity = SweptQuantity::ohms;
+  std::string part;  // as reports name it; empty for a rail
 };
 
 // A network with the nodes that are watched in it.

@@ -36,9 +36,15 @@ std::string arm_text(const std::vector<model::PartName>& parts, const std::strin
   return rail.empty() ? joined(parts) : fmt::format("{} to {}", joined(parts), shown(rail));
 }
 
-std::string converter_text(const model::Input& input) {
+// Its volts, or the net's name while they are not known.
+std::string end_text(const model::BoundEnd& end, double nominal, const model::BoardReport& board) {
+  const auto* net = std::get_if<model::NetId>(&end);
+  return net != nullptr && std::isnan(nominal) ? shown(net_name(board, *net)) : base::si_text(nominal, "V");
+}
+
+std::string converter_text(const model::Input& input, const model::BoardReport& board) {
   return fmt::format("{}, {} bits over {} to {}", shown(input.converter), input.bits,
-                     base::si_text(input.nominal_low, "V"), base::si_text(input.nominal_high, "V"));
+                     end_text(input.low, input.nominal_low, board), end_text(input.high, input.nominal_high, board));
 }
 
 std::string sensor_text(const model::AuditedInput& input) {
@@ -60,7 +66,7 @@ void optional_row(Page& page, std::string_view label, const std::string& text) {
 // What is said of a divider however the run goes.
 void found_rows(Page& page, const model::AuditedInput& input, const model::BoardReport& board) {
   const model::Divider& divider = input.divider;
-  page.row("converter", converter_text(divider.input));
+  page.row("converter", converter_text(divider.input, board));
   optional_row(page, "sensor", sensor_text(input));
   if (!divider.no_divider.empty()) page.row("divider", "none");
   optional_row(page, "upper arm", arm_text(divider.upper, divider.upper_rail));

@@ -125,11 +125,9 @@ TEST_CASE("a role of load on one of two parallel branches takes that one out of 
 }
 
 TEST_CASE("two dividers on a rail with ohms are each other's load, not each other's arms") {
-  const auto board =
-      board_of("RA VCC A 10k\nRT A 0 10k\nRB VCC B 10k\nRU B 0 10k\n",
-               converter("\"A\", \"B\"") + ntc("RT") + ntc("RU") + "[rail.VCC]\nvolts = 3.3\nohms = 100\n");
+  const auto board = board_of("RA VCC A 10k\nRT A 0 10k\nRB VCC B 10k\nRU B 0 10k\n",
+                              converter("\"A\"") + ntc("RT") + "[rail.VCC]\nvolts = 3.3\nohms = 100\n");
   CHECK(drawn(board, board.at("A")) == "VCC > RA > A > RT > 0; load RB RU");
-  CHECK(drawn(board, board.at("B")) == "VCC > RB > B > RU > 0; load RA RT");
 }
 
 TEST_CASE("a current source feeds the sensor in place of an upper resistor") {
@@ -142,7 +140,9 @@ TEST_CASE("a current source feeds the sensor in place of an upper resistor") {
 
 TEST_CASE("an input without a resistive way to a rail has no divider") {
   CHECK(picture("RT VCC B 10k\nC1 PIN 0 1u\n") == "no resistive way leads from it to a rail");
-  CHECK(picture("RT VCC B 10k\nR1 PIN X 1k\nR2 X Y 1k\n") == "no resistive way leads from it to a rail");
+  CHECK(picture("RT VCC B 10k\nR1 PIN X 1k\nR2 X Y 1k\n") ==
+        "no resistive way leads from it to a rail; net Y is no rail: if it is meant to be one, declare [rail.\"Y\"] "
+        "volts");
 }
 
 TEST_CASE("an input on a rail has no divider, and the rail is named") {
@@ -151,6 +151,120 @@ TEST_CASE("an input on a rail has no divider, and the rail is named") {
 }
 
 TEST_CASE("an input whose arms lead to one rail has no divider, and the rail is named") {
-  CHECK(picture("R1 PIN 0 10k\nRT PIN 0 10k\n") == "both its arms lead to one rail, 0");
+  CHECK(picture("R1 PIN 0 10k\nRT PIN 0 10k\n") == "its network reaches no rail but 0");
   CHECK(picture("RT PIN VCC 10k\n") == "both its arms lead to one rail, VCC");
+}
+
+TEST_CASE("a net that would be a rail if it were declared is named") {
+  const std::string up = "; net +3V3 is no rail: if it is meant to be one, declare [rail.\"+3V3\"] volts";
+  CHECK(picture("R1 +3V3 PIN 10k\nRT PIN 0 10k\n") == "its network reaches no rail but 0" + up);
+  CHECK(picture("R1 +3V3 PIN 10k\nRT PIN 0 10k\nR2 +3V3 B 1k\nR3 B 0 1k\nR4 +3V3 C 1k\nR5 C 0 1k\n") ==
+        "its network reaches no rail but 0" + up);
+  CHECK(picture("RT VCC PIN 10k\nR1 PIN -5V 10k\n") ==
+        "both its arms lead to one rail, VCC; net -5V is no rail: if it is meant to be one, declare [rail.\"-5V\"] "
+        "volts");
+}
+
+TEST_CASE("a sensor whose far end leads nowhere is not audited, and the net is named") {
+  const auto board = board_of(supply + "R1 VCC PIN 10k\nR2 PIN 0 10k\nRT PIN B 10k\n", declared);
+  CHECK(board.only().not_audited ==
+        test::Texts{"net B, the far end of sensor RT, leads to no rail, so nothing flows through the sensor: if it is "
+                    "meant to be a rail, declare [rail.\"B\"] volts"});
+  CHECK_FALSE(board.only().sensor.has_value());
+  CHECK(board.only().lower.empty());
+}
+
+TEST_CASE("a sensor whose far end leads on through a switch or transistor is not audited, and the part is named") {
+  const std::string part =
+      GENERATE(as<std::string>{}, "M1 S G 0 0 NM\n.model NM NMOS(VTO=1)\n",
+               "M1 S G 0 0 NM\nR7 S T 10\n.model NM NMOS\n", "S1 S 0 G 0 SW\n.model SW SW(VT=1 RON=1)\n");
+  const auto board = board_of(supply + "R1 VCC PIN 10k\nRT PIN S 10k\nV2 G 0 5\n" + part, declared);
+  CHECK(board.only().not_audited ==
+        test::Texts{"net S, the far end of sensor RT, leads on through " + part.substr(0, 2) +
+                    " only; this version takes resistances and sources for arms"});
+  CHECK(board.only().no_divider.empty());
+}
+
+TEST_CASE("a light pull-up before a heavy attenuator is an arm: nothing else leads to a second rail") {
+  const auto board = board_of("V1 V24 0 24\nR1 V24 A 10k\nRT A 0 10k\nR2 A PIN 150k\nR3 PIN 0 10k\n",
+                              "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"PIN\"]\n" + ntc("RT"));
+  CHECK(drawn(board, board.only()) == "V24 > R1 > PIN > RT R2 R3 > 0");
+  const auto& candidates = board.only().candidates;
+  REQUIRE(candidates.size() == 2);
+  CHECK(candidates[0].only_way);
+  CHECK(candidates[0].weight_volts < candidates[1].weight_volts / 10);
+  CHECK_FALSE(candidates[1].only_way);
+  // 24 V over 10k and 10k || 160k, and 1/16 of that (voltage divider rule).
+  const double tap = 24 * (1 / (1 / 10e3 + 1 / 160e3)) / (10e3 + 1 / (1 / 10e3 + 1 / 160e3)) / 16;
+  CHECK(board.bare_volts(board.only(), 3)[1] == Approx(tap).epsilon(1e-12));
+}
+
+TEST_CASE("the heaviest of the pull-ups below the share is the arm, lighter ones are load") {
+  const std::string lineariser = "R1 C 0 10k\nRT C 0 10k\n";
+  CHECK(picture("R2 VCC A 220k\nR9 A PIN 1k\nR3 A C 1k\n" + lineariser) == "VCC > R2 > A > R3 R1 RT > 0; sense R9");
+  CHECK(picture("R2 VCC A 220k\nR9 A PIN 1k\nR3 A D 500\nR4 D C 500\nR8 VCC D 2.2MEG\n" + lineariser) ==
+        "VCC > R2 > A > R3 R4 R1 RT > 0; sense R9; load R8");
+}
+
+TEST_CASE("a role on any part of a branch is the branch's") {
+  const std::string light = "R1 VCC PIN 1k\nRT A 0 10k\nR2 A PIN 100\nR3A A M 150k\nR3B M VCC 150k\n";
+  CHECK(picture(light) == "VCC > R1 > PIN > RT R2 > 0; load R3A R3B");
+  CHECK(picture(light, "[part.R3B]\nrole = \"arm\"\n") == "VCC > R1 R3A R3B > PIN > RT R2 > 0");
+  const std::string heavy = "R1 VCC PIN 1k\nRT A 0 10k\nR2 A PIN 100\nR3A A M 1500\nR3B M VCC 1500\n";
+  CHECK(picture(heavy) == "VCC > R1 R3A R3B > PIN > RT R2 > 0");
+  for (const std::string part : {"R3A", "R3B"}) {
+    const auto board = board_of(supply + heavy, declared + "[part." + part + "]\nrole = \"load\"\n");
+    CHECK(drawn(board, board.only()) == "VCC > R1 > PIN > RT R2 > 0; load R3A R3B");
+    CHECK(board.only().candidates.front().declared);
+    CHECK_FALSE(board.only().candidates.front().arm);
+  }
+}
+
+TEST_CASE("a role of load on a part behind a branch leaves the rest of the branch an arm") {
+  CHECK(picture("R1 VCC M 1k\nR2 M PIN 1k\nR3 M 0 100k\nRT PIN 0 10k\n", "[part.R3]\nrole = \"load\"\n") ==
+        "VCC > R1 R2 > PIN > RT > 0; load R3");
+}
+
+TEST_CASE("a role of load on the only way from the sensor to the pin is refused") {
+  const auto board =
+      board_of(supply + "R1 VCC PIN 1k\nRT A 0 10k\nR2 A PIN 100\n", declared + "[part.R2]\nrole = \"load\"\n");
+  CHECK(board.only().not_audited ==
+        test::Texts{"sensor RT moves it through R2; this version follows a sensor along resistances to the pin only"});
+}
+
+TEST_CASE("the role of a stand-in for an instance is that of the instance") {
+  CHECK(picture("R1 VCC PIN 10k\nRT PIN 0 10k\nXL PIN 0 BOX\n.subckt BOX A B\nR1 A B 1k\n.ends\n",
+                "[part.XL]\nmodel = \"resistor\"\nohms = \"20k\"\nrole = \"load\"\n") ==
+        "VCC > R1 > PIN > RT > 0; load XL");
+}
+
+TEST_CASE("what else hangs on a swept rail with ohms is no arm and no tap") {
+  const auto board = board_of(
+      supply + "R1 VBAT PIN 10k\nR2 PIN 0 10k\nR3 VBAT 0 3\n",
+      converter("\"PIN\"") + "[rail.VBAT]\nohms = 50\n[sensor.VBAT]\nkind = \"voltage\"\nfrom = 3\nto = 3.3\n");
+  CHECK(drawn(board, board.only()) == "VBAT > R1 > PIN > R2 > 0; load R3");
+}
+
+TEST_CASE("resistors parallel to the sense path are the sense path") {
+  CHECK(picture("R1 VCC T 1k\nRT T 0 10k\nR2 T PIN 1k\nR3 T M 1k\nR4 M PIN 1k\nR5 PIN 0 5MEG\n") ==
+        "VCC > R1 > T > RT > 0; sense R2 R3 R4; load R5");
+}
+
+TEST_CASE("an ammeter of 0 V in the lower arm is a part of it") {
+  const auto board = board_of(supply + "R1 VCC PIN 10k\nRT PIN A 10k\nVS A 0 0\nF1 0 PIN VS 0.2\n", declared);
+  CHECK(board.only().not_audited.empty());
+  CHECK(drawn(board, board.only()) == "VCC > R1 > PIN > RT VS > 0; load F1");
+  // At 10 kohm: (3.3 - v)/10k + 0.2 v/10k = v/10k (Kirchhoff's current law).
+  CHECK(board.pin_volts(board.only(), 3)[1] == Approx(3.3 / 1.8).epsilon(1e-12));
+}
+
+TEST_CASE("a sensor's own model of a source that follows its ammeter to ground is audited") {
+  const auto board = board_of(
+      supply +
+          "R1 VCC PIN 10k\nXT PIN 0 BEAD R=1k\n.subckt BEAD P N PARAMS: R=1\nE1 P M VALUE={I(VS)*R}\nVS M N 0\n.ends\n",
+      converter("\"PIN\"") + "[sensor.XT]\nkind = \"parameter\"\nsweep = \"R\"\nfrom = 5000\nto = 15000\n");
+  CHECK(board.only().not_audited.empty());
+  CHECK(drawn(board, board.only()) == "VCC > R1 > PIN > XT > 0");
+  REQUIRE(board.only().sensor_form);
+  CHECK(board.only().sensor_form->source_ohms == Approx(10e3).epsilon(1e-12));
 }

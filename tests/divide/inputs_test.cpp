@@ -76,3 +76,8 @@ TEST_CASE("an input that is not chosen still loads the network that it is on") {
   // 10 kohm parallel to 10 kohm parallel to 20 kohm under 10 kohm: 4/(4 + 10) of 3.3 V (voltage divider rule).
   CHECK(board.pin_volts(board.only(), 3)[1] == Approx(3.3 * 4 / 14).epsilon(1e-12));
 }
+
+TEST_CASE("a supply that is no net is an error with the nearest one, once for all inputs") {
+  CHECK(board_of(two, converter("\"A*\"") + "supply = \"VCCC\"\n").said ==
+        test::Texts{"tap.toml:5:10: error: no net \"VCCC\" in the netlist; did you mean \"VCC\"?"});
+}

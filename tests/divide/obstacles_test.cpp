@@ -56,15 +56,19 @@ TEST_CASE("connectors, test points, diodes and capacitors without a model are ta
 }
 
 TEST_CASE("the class letters of a designator decide, not its first letter and not its path") {
-  CHECK(divide::is_taken_as_open("J1"));
-  CHECK(divide::is_taken_as_open("tp12"));
-  CHECK(divide::is_taken_as_open("X1.X2.D3"));
-  CHECK_FALSE(divide::is_taken_as_open("PS1"));
-  CHECK_FALSE(divide::is_taken_as_open("DS1"));
-  CHECK_FALSE(divide::is_taken_as_open("D1.U2"));
-  CHECK_FALSE(divide::is_taken_as_open("U7"));
-  CHECK_FALSE(divide::is_taken_as_open(""));
-  CHECK_FALSE(divide::is_taken_as_open("1"));
+  CHECK(divide::is_taken_as_open("J1", 'j'));
+  CHECK(divide::is_taken_as_open("tp12", 't'));
+  CHECK(divide::is_taken_as_open("X1.X2.D3", 'd'));
+  CHECK(divide::is_taken_as_open("XJ1", 'x'));
+  CHECK(divide::is_taken_as_open("X1.XTP3", 'x'));
+  CHECK_FALSE(divide::is_taken_as_open("XU1", 'x'));
+  CHECK_FALSE(divide::is_taken_as_open("X1", 'x'));
+  CHECK_FALSE(divide::is_taken_as_open("PS1", 'p'));
+  CHECK_FALSE(divide::is_taken_as_open("DS1", 'd'));
+  CHECK_FALSE(divide::is_taken_as_open("D1.U2", 'u'));
+  CHECK_FALSE(divide::is_taken_as_open("U7", 'u'));
+  CHECK_FALSE(divide::is_taken_as_open("", '?'));
+  CHECK_FALSE(divide::is_taken_as_open("1", '1'));
 }
 
 TEST_CASE("a stand-in of open takes the part away") {
@@ -126,8 +130,16 @@ TEST_CASE("an input with several obstacles names them all") {
 }
 
 TEST_CASE("a source in the network that follows the current of a rail's source stops the audit") {
-  CHECK(board_of(half + "F1 0 A V1 0.01\n", declared).only().not_audited ==
-        Texts{"a source in its network follows the current of a source that makes a rail"});
+  CHECK(
+      board_of(half + "F1 0 A V1 0.01\n", declared).only().not_audited ==
+      Texts{"F1 follows the current of V1, which feeds a whole rail: let it follow a source of 0 V in the branch that "
+            "it means"});
+}
+
+TEST_CASE("the voltage of the divider's own rail is in its network") {
+  const auto board = board_of("V1 VCC 0 3V3\nV2 VDD 0 1V8\nR1 VCC A 4.7k\nRT A 0 10k\n", declared);
+  REQUIRE(board.only().suspects.size() == 1);
+  CHECK(board.names.text(board.circuit.elements[board.only().suspects[0].element.index()].name) == "V1");
 }
 
 TEST_CASE("a suspect value is told where it stands in the input's network and nowhere else") {

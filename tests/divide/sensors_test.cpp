@@ -1,6 +1,7 @@
 // Sensors: what a declaration names, what it replaces, and which inputs it moves.
 #include <catch2/catch.hpp>
 
+#include "divide/sweep_values.hpp"
 #include "tests/divide/division.hpp"
 
 using test::board_of;
@@ -26,6 +27,24 @@ std::string voltage(const std::string& rail) {
 double middle(const test::Board& board) {
   return board.pin_volts(board.only(), 3)[1];
 }
+
+Texts several(const std::string& said) {
+  return {
+      said +
+      "; this version sweeps one: leave out the [sensor.NAME] of those that may stand still at the netlist's values"};
+}
+
+// Not audited for one reason.
+std::string why(const test::Board& board, const std::string& input_name) {
+  const auto& divider = board.at(input_name);
+  REQUIRE(divider.not_audited.size() == 1);
+  CHECK_FALSE(divider.sensor.has_value());
+  return divider.not_audited.front();
+}
+
+// Two thermistors, each with a divider of its own, on one rail with a source resistance.
+const std::string shared_rail = "RA VCC A 10k\nRT A 0 10k\nRB VCC B 1k\nRU B 0 1k\n";
+const std::string rail_with_ohms = "[rail.VCC]\nvolts = 3.3\nohms = 100\n";
 
 }  // namespace
 
@@ -120,7 +139,7 @@ TEST_CASE("a parameter of an instance that is not there is an error with the nea
 
 TEST_CASE("two sensors that move one input are refused, both named") {
   const auto board = board_of(top + "RT A 0 10k\nRU A 0 10k\n", input + ntc("RT") + ntc("RU"));
-  CHECK(board.only().not_audited == Texts{"2 sensors move it (RT, RU); this version sweeps one"});
+  CHECK(board.only().not_audited == several("2 sensors move it (RT, RU)"));
   CHECK_FALSE(board.only().sensor.has_value());
 }
 
@@ -161,29 +180,170 @@ TEST_CASE("ground cannot be swept") {
         Texts{"tap.toml:5:9: error: ground cannot be swept"});
 }
 
-TEST_CASE("a sensor on a rail that a monitor sweeps is audited with the rail at rest") {
+TEST_CASE("sensors that share the drop of a rail are told apart by none: each input refuses, and the rail is named") {
+  const auto board = board_of(shared_rail, converter("\"A\", \"B\"") + ntc("RT") + ntc("RU") + rail_with_ohms);
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, RU through rail VCC)"));
+  CHECK(Texts{why(board, "B")} == several("2 sensors move it (RT through rail VCC, RU)"));
+}
+
+TEST_CASE("a second sensor counts whether or not an input is declared on its divider") {
+  const auto board = board_of(shared_rail, converter("\"A\"") + ntc("RT") + ntc("RU") + rail_with_ohms);
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, RU through rail VCC)"));
+}
+
+TEST_CASE("a sensor on a rail with ohms whose monitor is audited is a second one") {
+  const auto board = board_of("R1 VBAT A 10k\nR2 A 0 10k\nR3 VBAT X 1k\nRT X 0 1k\n",
+                              "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"A\"]\n" + ntc("RT") +
+                                  "[sensor.VBAT]\nkind = \"voltage\"\nfrom = 3\nto = 3.3\n[rail.VBAT]\nohms = 100\n");
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT through rail VBAT, VBAT)"));
+}
+
+TEST_CASE("a sensor that draws from the tap through a controlled source is a second one, and the source is named") {
+  const auto board =
+      board_of(top + "RT A 0 10k\nG1 B 0 A 0 0.1m\nR2 VCC B 1k\nRU B 0 1k\n",
+               "[converter.ADC]\nbits = 12\nhigh = \"VCC\"\ninputs = [\"A\", \"B\"]\n" + ntc("RT") + ntc("RU"));
+  CHECK(board.at("A").not_audited.empty());
+  CHECK(Texts{why(board, "B")} == several("2 sensors move it (RT through G1, RU)"));
+}
+
+TEST_CASE("a sensor in the network of the range's end is a second one") {
+  const auto board = board_of(top + "RT A 0 10k\nR3 VCC REF 1k\nR4 REF X 10k\nRU X 0 10k\n",
+                              "[converter.ADC]\nbits = 12\nhigh = \"REF\"\ninputs = [\"A\"]\n" + ntc("RT") + ntc("RU"));
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, RU through REF, an end of its range)"));
+}
+
+TEST_CASE("a parameter that moves another divider on the rail is a second sensor") {
+  const auto board = board_of(
+      "RA VCC A 1k\nRT A 0 10k\nRB VCC B 1k\nX2 B 0 BEAD R=10k\n.subckt BEAD P N PARAMS: R=1\nR1 P N "
+      "{R}\n.ends\n",
+      converter("\"A\"") + ntc("RT") + parameter("X2", "R") + rail_with_ohms);
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, X2 through rail VCC)"));
+}
+
+TEST_CASE("a sensor that acts through a controlled source alone is not audited, and the source is named") {
+  const auto board = board_of(top + "RT A 0 10k\nG1 B 0 A 0 1m\nR2 VCC B 1k\n", converter("\"A\", \"B\"") + ntc("RT"));
+  CHECK(why(board, "B") ==
+        "sensor RT moves it through G1; this version follows a sensor along resistances to the pin only");
+  CHECK_FALSE(board.at("B").no_sensor);
+}
+
+TEST_CASE("a sensor that acts through the drop of a rail alone is not audited, and the rail is named") {
+  const auto board = board_of("R0 VCC A 10k\nRT A 0 10k\nR1 VCC PIN 2k\nR2 PIN 0 10k\n",
+                              converter("\"PIN\"") + ntc("RT") + rail_with_ohms);
+  CHECK(why(board, "PIN") ==
+        "sensor RT moves it through rail VCC; this version follows a sensor along resistances to the pin only");
+}
+
+TEST_CASE("a sensor that moves an end of the range alone is not audited") {
+  const auto board = board_of(top + "R2 A 0 10k\nR3 VCC REF 1k\nRT REF 0 10k\n",
+                              "[converter.ADC]\nbits = 12\nhigh = \"REF\"\ninputs = [\"A\"]\n" + ntc("RT"));
+  CHECK(why(board, "A") ==
+        "sensor RT moves it through REF, an end of its range; this version follows a sensor along resistances to the "
+        "pin only");
+}
+
+TEST_CASE("a parameter that moves nothing of the part it is declared for is an error at the word") {
+  const std::string netlist =
+      ".param TT=20\n" + top +
+      "XS A 0 BEAD R=1k\nR5 A 0 {1k*TT}\nRS A 0 1k\n.subckt BEAD P N PARAMS: R=1\nR1 P N {R}\n.ends\n";
+  CHECK(board_of(netlist, input + parameter("XS", "TT")).said ==
+        Texts{"tap.toml:7:9: error: \"TT\" moves nothing of XS"});
+  CHECK(board_of(netlist, input + parameter("RS", "TT")).said ==
+        Texts{"tap.toml:7:9: error: \"TT\" moves nothing of RS"});
+}
+
+TEST_CASE("a part of the netlist takes no ends from its declaration") {
+  CHECK(board_of(top + "RT A 0 10k\n", input + ntc("RT", "between = [\"A\", \"0\"]\n")).said ==
+        Texts{"tap.toml:5:9: error: \"RT\" is an element of the netlist: leave out \"between\", or give the sensor "
+              "another name"});
+  CHECK(board_of(top + "XT A 0 BEAD\n.subckt BEAD P N\nR1 P N 1k\n.ends\n",
+                 input + ntc("XT", "between = [\"A\", \"0\"]\n"))
+            .said == Texts{"tap.toml:5:9: error: \"XT\" is an instance of the netlist: leave out \"between\", or give "
+                           "the sensor another name"});
+}
+
+TEST_CASE("the arms of a divider in which nothing varies are named") {
+  const auto board = board_of(top + "R2 A 0 10k\nR3 A PIN 1k\n", converter("\"PIN\""));
+  CHECK(board.only().no_sensor);
+  CHECK(drawn(board, board.only()) == "VCC > R1 > A > R2 > 0; sense R3");
+  const auto pulled = board_of("V1 VCC 0 3.3\nR1 VCC A 10k\n", input);
+  CHECK(pulled.only().no_sensor);
+  CHECK(test::list(pulled.only().upper) == "R1");
+}
+
+TEST_CASE("a resistance whose value is 0 somewhere in its sweep is named") {
+  const auto board = board_of(".param x=0.5\n" + top + "RS A B {x*10k}\nRB B 0 {(1-x)*10k}\n",
+                              input + "[sensor.RS]\nkind = \"parameter\"\nsweep = \"x\"\nfrom = 0\nto = 1\n");
+  const auto& sensor = board.sheet.sensors[*board.only().sensor];
+  const auto swept =
+      divide::swept_values(board.only().whole, board.circuit, sensor, divide::measurands(sensor, 3).value());
+  REQUIRE_FALSE(swept.ok());
+  CHECK(swept.error() == "the resistance of RS is 0 ohm at 0");
+}
+
+// Where a rail feeds the sensor's divider alone and is the converter's range, every voltage of the linear network goes
+// with the rail (superposition), and the reading does not.
+TEST_CASE("a sensor on a rail that a monitor sweeps and that is the range is audited with the rail at rest") {
   const std::string at_rest = GENERATE(as<std::string>{}, "V2 BATT 0 12\n", "");
-  const std::string rail = at_rest.empty() ? "[rail.BATT]\nvolts = 12\n" : "";
-  const auto board = board_of("V1 VCC 0 3.3\n" + at_rest + "R1 BATT M 30k\nR2 M 0 10k\nR3 BATT A 10k\nRT A 0 10k\n",
-                              converter("\"A\", \"M\"") + voltage("BATT") + ntc("RT") + rail);
-  CHECK(board.at("M").sensor_name == "BATT");
+  const std::string ohms = GENERATE(as<std::string>{}, "ohms = 5\n", "");
+  if (!at_rest.empty() && !ohms.empty()) return;
+  const std::string rail = at_rest.empty() ? "[rail.BATT]\nvolts = 12\n" + ohms : "";
+  const auto board =
+      board_of(at_rest + "R1 BATT M 30k\nR2 M 0 10k\nR3 BATT A 10k\nRT A 0 10k\n",
+               "[converter.ADC]\nbits = 12\nhigh = \"BATT\"\ninputs = [\"A\"]\n" + voltage("BATT") + ntc("RT") + rail);
   const auto& divider = board.at("A");
   CHECK(divider.not_audited.empty());
   CHECK(divider.sensor_name == "RT");
-  CHECK(drawn(board, divider) == "BATT > R3 > A > RT > 0");
-  CHECK(board.pin_volts(divider, 3)[1] == Approx(6).epsilon(1e-12));
+  if (ohms.empty()) {
+    CHECK(drawn(board, divider) == "BATT > R3 > A > RT > 0");
+    CHECK(board.pin_volts(divider, 3)[1] == Approx(6).epsilon(1e-12));
+  }
+}
+
+TEST_CASE("a leakage counts as it would where the rail that is the range stands lowest") {
+  // 1 uA at 9 V moves the reading as 12/9 of it at 12 V.
+  const auto board =
+      board_of("V2 BATT 0 12\nR1 BATT M 30k\nR2 M 0 10k\nR3 BATT A 10k\nRT A 0 10k\n",
+               "[converter.ADC]\nbits = 12\nhigh = \"BATT\"\nleakage = \"1uA\"\ninputs = [\"A\", \"M\"]\n" +
+                   voltage("BATT") + ntc("RT"));
+  REQUIRE(board.at("A").whole.leakage_amperes.size() == 1);
+  CHECK(board.at("A").whole.leakage_amperes[0] == Approx(1e-6 * 12 / 9).epsilon(1e-12));
+  CHECK(board.at("M").whole.leakage_amperes[0] == Approx(1e-6).epsilon(1e-12));
+}
+
+TEST_CASE("a rail that a monitor sweeps is a second sensor where the reading goes with it") {
+  const std::string fed = "V1 VCC 0 3.3\nV2 BATT 0 12\nR3 BATT A 10k\nRT A 0 10k\n";
+  const auto with = [&](const std::string& netlist, const std::string& ends) {
+    return board_of(netlist,
+                    "[converter.ADC]\nbits = 12\n" + ends + "inputs = [\"A\"]\n" + voltage("BATT") + ntc("RT"));
+  };
+  const Texts both = several("2 sensors move it (BATT, RT)");
+  CHECK(Texts{why(with(fed, "high = 12\n"), "A")} == both);
+  CHECK(Texts{why(with(fed, "high = \"VCC\"\n"), "A")} == both);
+  CHECK(Texts{why(with(fed, "low = 1\nhigh = \"BATT\"\n"), "A")} == both);
+  CHECK(Texts{why(with(fed + "R4 A VCC 100k\n", "high = \"BATT\"\n"), "A")} == both);
+  CHECK(Texts{why(with(fed + "I1 0 A 1u\n", "high = \"BATT\"\n"), "A")} == both);
+  CHECK(Texts{why(with(fed + "D1 A BATT DC\n.model DC D\n", "high = \"BATT\"\n"), "A")} == both);
+  CHECK(with(fed, "high = \"BATT\"\n").at("A").not_audited.empty());
+}
+
+TEST_CASE("a rail that a monitor sweeps and that is an end of the range alone is a second sensor") {
+  const auto board =
+      board_of("V1 VCC 0 12\nV2 BATT 0 12\nR3 VCC A 10k\nRT A 0 10k\n",
+               "[converter.ADC]\nbits = 12\nhigh = \"BATT\"\ninputs = [\"A\"]\n" + voltage("BATT") + ntc("RT"));
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (BATT through BATT, an end of its range, RT)"));
 }
 
 TEST_CASE("a sensor on a rail that a monitor sweeps and that nobody gives a voltage is not audited") {
-  const auto board = board_of("V1 VCC 0 3.3\nR1 BATT M 30k\nR2 M 0 10k\nR3 BATT A 10k\nRT A 0 10k\n",
-                              converter("\"A\", \"M\"") + voltage("BATT") + ntc("RT"));
+  const auto board =
+      board_of("R1 BATT M 30k\nR2 M 0 10k\nR3 BATT A 10k\nRT A 0 10k\n",
+               "[converter.ADC]\nbits = 12\nhigh = \"BATT\"\ninputs = [\"A\", \"M\"]\n" + voltage("BATT") + ntc("RT"));
   CHECK(board.at("M").not_audited.empty());
-  CHECK(board.at("A").not_audited.size() == 1);
+  CHECK(board.at("A").not_audited == Texts{"rail BATT has no voltage: declare [rail.\"BATT\"] volts"});
 }
 
-TEST_CASE("a swept rail that only loads a sensor's divider gives way to the sensor") {
+TEST_CASE("a swept rail that loads a sensor's divider is a second sensor") {
   const auto board = board_of("V1 VCC 0 3.3\nR1 VCC A 10k\nRT A 0 10k\nR2 A PIN 1k\nR9 PIN BATT 10MEG\n",
                               converter("\"PIN\"") + voltage("BATT") + ntc("RT") + "[rail.BATT]\nvolts = 12\n");
-  CHECK(board.only().not_audited.empty());
-  CHECK(drawn(board, board.only()) == "VCC > R1 > A > RT > 0; sense R2; load R9");
+  CHECK(Texts{why(board, "PIN")} == several("2 sensors move it (BATT, RT)"));
 }

@@ -213,6 +213,20 @@ TEST_CASE("ambiguous-tap: exactly the limit makes an arm, and a raised limit sil
   CHECK(findings_of(RuleId::ambiguous_tap, input).empty());
 }
 
+TEST_CASE("ambiguous-tap: an arm below the limit that alone leads to a second rail is told as what it is") {
+  const fixtures::SmallBoard board;
+  auto input = with_candidates(1.2, 0.06);
+  CHECK(findings_of(RuleId::ambiguous_tap, input, nullptr, board.view()).empty());
+  for (auto& candidate : input.divider.candidates) candidate.only_way = candidate.weight_volts == 0.06;
+  const auto found = findings_of(RuleId::ambiguous_tap, input, nullptr, board.view());
+  REQUIRE(found.size() == 1);
+  CHECK(*found[0].value == Approx(0.05));
+  CHECK(found[0].message ==
+        "without its branches the pin moves: X1.R5 and R6 at CONN by 60 mV, R3 at TAP by 1.2 V; the first is below the "
+        "10 % of the heaviest that makes an arm, and counts as one because nothing else leads to a second rail; where "
+        "that is right, say [part.\"X1.R5\"] role = \"arm\"");
+}
+
 TEST_CASE("ambiguous-tap: one arm is no question, nor is one whose role is declared") {
   auto load = with_candidates(1.2, 0.3);
   load.divider.candidates[0].arm = false;

@@ -169,6 +169,11 @@ TEST_CASE("a sensor that cannot be is refused at the key that is wrong") {
         Messages{"7:11: expected two different nets, found the array [\"A\", \"a\"]"});
   CHECK(read("[sensor.V]\nkind = \"voltage\"\nfrom = 0\nto = 5\nbetween = [\"A\", \"B\"]").messages() ==
         Messages{"5:1: \"between\" does not go with kind \"voltage\": the table's name is the rail's"});
+  CHECK(
+      read("[sensor.X1]\nkind = \"parameter\"\nsweep = \"T\"\nfrom = 0\nto = 5\nbetween = [\"A\", \"B\"]").messages() ==
+      Messages{
+          "6:1: \"between\" does not go with kind \"parameter\": the part that the table names has its ends in the "
+          "netlist"});
 }
 
 TEST_CASE("parts refuse a resistance that goes with no stand-in") {

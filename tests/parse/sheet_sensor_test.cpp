@@ -50,10 +50,11 @@ TEST_CASE("each kind takes its range in the unit of its measurand, and its own k
       "[sensor.C]\nkind = \"photoresistor\"\nohms_at_10lx = \"15k\"\ngamma = 0.7\nfrom = 1\nto = \"10 klx\"\nspacing = "
       "\"linear\"\n"
       "[sensor.VIN]\nkind = \"voltage\"\nfrom = \"9 V\"\nto = 16\naccuracy = \"50 mV\"\n"
-      "[sensor.X1]\nkind = \"parameter\"\nsweep = \"T\"\nfrom = \"-10\"\nto = 60\nbetween = [\"N1\", \"0\"]\n");
+      "[sensor.X1]\nkind = \"parameter\"\nsweep = \"T\"\nfrom = \"-10\"\nto = 60\n"
+      "[sensor.LEAD]\nkind = \"rtd\"\nr0 = 100\nfrom = 0\nto = 50\nbetween = [\"N1\", \"0\"]\n");
   CHECK(reading.messages() == Messages{});
   const auto& sensors = reading.sheet.sensors;
-  REQUIRE(sensors.size() == 5);
+  REQUIRE(sensors.size() == 6);
   CHECK(setting_text(sensors[0]) == "a=0.0011 b=0.00024 c=7e-08 ");
   CHECK(sensors[0].to->value == 85);
   CHECK(setting_text(sensors[1]) == "r0=1000 ");
@@ -66,9 +67,9 @@ TEST_CASE("each kind takes its range in the unit of its measurand, and its own k
   CHECK(sensors[4].sweep->value == "T");
   CHECK(reading.spot(sensors[4].sweep->where) == "\"T\" @ 28:9");
   CHECK(sensors[4].from->value == -10);
-  REQUIRE(sensors[4].between.has_value());
-  CHECK(sensors[4].between->first.value == "N1");
-  CHECK(reading.spot(sensors[4].between->second.where) == "\"0\" @ 31:18");
+  REQUIRE(sensors[5].between.has_value());
+  CHECK(sensors[5].between->first.value == "N1");
+  CHECK(reading.spot(sensors[5].between->second.where) == "\"0\" @ 36:18");
 }
 
 TEST_CASE("every key that a kind's table lists is taken, and no key of another kind") {

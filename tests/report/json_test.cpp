@@ -126,6 +126,14 @@ TEST_CASE("what does not apply is absent") {
   CHECK_FALSE(parsed(sample::traced())["boards"][0].contains("not_checked"));
 }
 
+TEST_CASE("an end of the range whose volts are not known is absent, never 0") {
+  model::AuditedInput input = sample::not_audited();
+  input.divider.input.nominal_high = std::numeric_limits<double>::quiet_NaN();
+  const Json out = of(input);
+  CHECK_FALSE(out.contains("high"));
+  CHECK(out["low"] == 0.0);
+}
+
 TEST_CASE("an empty arm, sense path or load of a divider is an empty list") {
   model::AuditedInput input = sample::good();
   input.divider.upper.clear();

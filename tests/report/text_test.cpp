@@ -1,6 +1,7 @@
 #include "report/text.hpp"
 
 #include <algorithm>
+#include <limits>
 #include <sstream>
 
 #include <catch2/catch.hpp>
@@ -105,6 +106,15 @@ TEST_CASE("a passed input says so, and an input without a result never does") {
   CHECK_FALSE(has(now, "nothing found"));
   CHECK_FALSE(has(now, "span used"));
   CHECK(has(now, "1 input, 0 audited"));
+}
+
+TEST_CASE("an end of the range whose volts are not known goes by the name of its net") {
+  model::AuditedInput input = sample::not_audited();
+  input.divider.input.high = model::NetId{2};
+  input.divider.input.nominal_high = std::numeric_limits<double>::quiet_NaN();
+  CHECK(has(of(input), "12 bits over 0 V to AIR_TAP\n"));
+  input.divider.input.nominal_high = 2.5;
+  CHECK(has(of(input), "12 bits over 0 V to 2.5 V\n"));
 }
 
 TEST_CASE("a figure that is no number is left out") {

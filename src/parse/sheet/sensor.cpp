@@ -63,6 +63,13 @@ void read_between(TableKeys& keys, const sensor::Kind& kind, model::SensorDeclar
                 fmt::format("\"between\" does not go with kind \"{}\": the table's name is the rail's", kind.name));
     return;
   }
+  if (kind.moves == sensor::Moves::parameter) {
+    keys.refuse("between",
+                fmt::format("\"between\" does not go with kind \"{}\": the part that the table names has its "
+                            "ends in the netlist",
+                            kind.name));
+    return;
+  }
   const TomlEntry* entry = keys.take("between");
   if (entry == nullptr) return;
   SheetContext& context = keys.context();

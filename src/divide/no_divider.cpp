@@ -1,0 +1,103 @@
+#include "divide/no_divider.hpp"
+
+#include <algorithm>
+#include <fmt/format.h>
+#include <map>
+#include <unordered_set>
+
+#include "base/overloaded.hpp"
+#include "base/text.hpp"
+
+namespace divide {
+namespace {
+
+bool is_zero(const model::Number& number) {
+  return number.fixed() && number.value == 0;
+}
+
+bool drives(const model::Part& part) {
+  return std::visit(base::overloaded{[](const model::VoltageSource& v) { return !is_zero(v.volts); },
+                                     [](const model::CurrentSource& i) { return !is_zero(i.amperes); },
+                                     [](const model::VoltageControlled&) { return true; },
+                                     [](const model::CurrentControlled&) { return true; },
+                                     [](const model::Behavioural&) { return true; }, [](const auto&) { return false; }},
+                    part);
+}
+
+std::string net_text(const Graph& graph, Node node) {
+  return base::printable_short(graph.names().text(graph.nodes().nets(node).front()));
+}
+
+// Calls visit(node) for each end by which a part conducts.
+template <class Visit>
+void for_each_end(const Graph& graph, std::span<const Edge> edges, const Visit& visit) {
+  for (const Edge edge : edges)
+    for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
+      if (graph.pin_use(edge, i) == PinUse::conducts) visit(graph.pin(edge, i));
+}
+
+// Parts through which the far end leads on that are no way for a walk.
+std::string parts_beyond(const Graph& graph, const Surroundings& around, Node far, const Region& behind) {
+  std::unordered_set<Node> nodes{far};
+  for (const Edge edge : behind.edges)
+    for (std::size_t i = 0; i < 2; ++i) nodes.insert(graph.pin(edge, i));
+  for (const Edge edge : around.edges) {
+    if (graph.feeds(edge)) continue;
+    for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
+      if (graph.pin_use(edge, i) == PinUse::conducts && nodes.contains(graph.pin(edge, i)))
+        return base::printable_short(graph.name(edge));
+  }
+  return {};
+}
+
+}  // namespace
+
+bool is_driven(const Graph& graph, std::span<const Edge> edges) {
+  bool driven = std::any_of(edges.begin(), edges.end(), [&](const Edge edge) { return drives(graph.part(edge)); });
+  for_each_end(graph, edges, [&](Node node) {
+    const Rail* rail = graph.rails().at(node);
+    driven = driven || (rail != nullptr && (!rail->has_volts || rail->sensor || !is_zero(rail->volts)));
+  });
+  return driven;
+}
+
+std::string missing_rail(const Graph& graph, std::span<const Edge> edges, Node pin) {
+  std::map<Node, std::size_t> ends;
+  for_each_end(graph, edges, [&](Node node) {
+    if (node != pin && graph.rails().at(node) == nullptr) ++ends[node];
+  });
+  Node best = pin;
+  std::size_t most = 2;
+  for (const auto& [node, count] : ends) {
+    if (count == 1) {
+      best = node;
+      break;
+    }
+    if (count > most) best = node, most = count;
+  }
+  if (best == pin) return {};
+  const std::string net = net_text(graph, best);
+  return fmt::format("; net {} is no rail: if it is meant to be one, declare [rail.\"{}\"] volts", net, net);
+}
+
+std::string dead_end(const Graph& graph, const Surroundings& around, const SensorEdge& sensor, const Walk& walk) {
+  if (sensor.is_rail || !walk.far_end) return {};
+  const Region& behind = walk.behind_sensor;
+  const bool returns =
+      std::any_of(behind.returns.begin(), behind.returns.end(), [&](Node node) { return node != walk.nodes.front(); });
+  if (behind.reaches_rail() || returns) return {};
+  const std::string name = base::printable_short(graph.board().sensors[sensor.sensor].name);
+  const std::string net = net_text(graph, *walk.far_end);
+  const std::string beyond = parts_beyond(graph, around, *walk.far_end, behind);
+  if (!beyond.empty())
+    return fmt::format(
+        "net {}, the far end of sensor {}, leads on through {} only; this version takes resistances and "
+        "sources for arms",
+        net, name, beyond);
+  return fmt::format(
+      "net {}, the far end of sensor {}, leads to no rail, so nothing flows through the sensor: if it is "
+      "meant to be a rail, declare [rail.\"{}\"] volts",
+      net, name, net);
+}
+
+}  // namespace divide
