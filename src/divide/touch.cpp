@@ -40,8 +40,8 @@ std::string parts_sentence(const std::vector<std::string>& parts) {
   for (std::size_t i = 0; i < std::min(parts.size(), most); ++i) list += (i == 0 ? "" : ", ") + parts[i];
   if (parts.size() > most) list += fmt::format(" and {} more", parts.size() - most);
   const bool one = parts.size() == 1;
-  return fmt::format("{} {} no model here and {} in the way: declare a stand-in for {}", list, one ? "has" : "have",
-                     one ? "is" : "are", one ? "it" : "each");
+  return fmt::format("what {} {} is not known, and {} in the way: declare a stand-in for {}", list, one ? "does" : "do",
+                     one ? "it is" : "they are", one ? "it" : "each");
 }
 
 std::string place_text(const source::Sources& sources, source::Place place) {

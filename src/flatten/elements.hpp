@@ -29,6 +29,9 @@ class Elements {
   // Likewise where the card, or one that it rests on, has an error, which has been said.
   void add_broken(const Frame& frame, const model::ElementCard& card);
 
+  // Says how many words behind values nobody has asked for.
+  void tell_unused();
+
   // The net of a card's node.
   [[nodiscard]] model::NetId net(const Frame& frame, const model::ElementCard& card, std::uint32_t node);
 
@@ -82,6 +85,7 @@ class Elements {
     if (quantity.odd) suspect(quantity.readings);
   }
   void suspect(const OddValue& value);
+  void note_unused(const model::ElementCard& card, const FoundModel& model);
 
   Work& work_;
   Parameters& parameters_;
@@ -89,6 +93,8 @@ class Elements {
   Models& models_;
   model::ElementId current_;  // the element whose part is being made
   std::vector<Waiting> waiting_;
+  const model::ElementCard* unused_ = nullptr;  // the first card with a word behind its value that is no model
+  std::size_t unused_count_ = 0;
 };
 
 }  // namespace flatten

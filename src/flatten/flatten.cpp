@@ -63,6 +63,7 @@ model::Circuit flatten(model::Netlist& netlist, base::NameTable& names, const Op
   Frame top;
   sweeps.begin(top);
   instances.expand(top);
+  elements.tell_unused();
   parameters.check_all(top);
   settle_unused(work, models, instances);
   work.problems.tell(work.circuit.instances, names, diagnostics);

@@ -129,6 +129,7 @@ Elements::Outcome Elements::resistor(const Frame& frame, const model::ElementCar
   if (count && *count > 0)
     quantity.number = scaled(work_.circuit.expressions, model::Op::divide, quantity.number, *count);
   detail(frame, card, quantity, model);
+  note_unused(card, model);
   suspect(quantity);
   return model::Resistor{quantity.number};
 }
@@ -141,6 +142,7 @@ Elements::Outcome Elements::reactance(const Frame& frame, const model::ElementCa
   if (std::holds_alternative<Behaving>(reading)) return Unmodelled{Why::unsupported, {}};
   if (const auto* word = std::get_if<NoValue>(&reading)) return without_value(frame, card, word->word);
   const auto& quantity = std::get<Quantity>(reading);
+  note_unused(card, model);
   suspect(quantity);
   // At DC an inductor is its series resistance and a capacitor its leakage, where the card gives one.
   const KeyOhms own = key_ohms(frame, card, card.letter == 'c' ? "rpar" : "rser");
@@ -148,6 +150,20 @@ Elements::Outcome Elements::reactance(const Frame& frame, const model::ElementCa
   if (own.ohms) return model::Resistor{*own.ohms};
   if (card.letter == 'c') return model::Capacitor{quantity.number};
   return model::Inductor{quantity.number};
+}
+
+void Elements::note_unused(const model::ElementCard& card, const FoundModel& model) {
+  if (model.card != nullptr || !card.reference.name.valid()) return;
+  if (unused_count_++ == 0) unused_ = &card;
+}
+
+void Elements::tell_unused() {
+  if (unused_ == nullptr) return;
+  std::string text = fmt::format("\"{}\" behind the value of {} is no model and is not used",
+                                 work_.shown(unused_->reference.name), work_.shown(unused_->name));
+  if (unused_count_ > 1) text += fmt::format("; so it is with {} more", unused_count_ - 1);
+  work_.problems.say(ProblemKind::value, base::Level::note, work_.place(unused_->card, unused_->reference), {},
+                     std::move(text));
 }
 
 Elements::KeyOhms Elements::key_ohms(const Frame& frame, const model::ElementCard& card, std::string_view key) {

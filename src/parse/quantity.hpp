@@ -1,6 +1,7 @@
 // Quantities as people write them: in declarations (SI units, M is mega) and in netlists (both readings kept).
 #pragma once
 
+#include <optional>
 #include <string>
 #include <string_view>
 
@@ -48,5 +49,9 @@ struct Literal {
 // there. SPICE's suffixes: f p n u m k meg g t mil, in any case, letters after them ignored (ngspice manual, chapter on
 // circuit elements); marking codes: IEC 60062 clause 4.
 [[nodiscard]] base::Result<Literal> read_literal(std::string_view text);
+
+// Why a text that has the form of a literal is none all the same: it can be read in two ways, its tolerance cannot be,
+// or no number holds it. Nothing where it is no literal at all, or a good one.
+[[nodiscard]] std::optional<std::string> literal_refusal(std::string_view text);
 
 }  // namespace parse

@@ -28,7 +28,8 @@ Texts unread(const std::string& line) {
 
 TEST_CASE("a part without a model on the tap stops the audit, and the sentence says what to declare") {
   const auto board = board_of(half + "XU3 A 0 B OPAMP\n", declared);
-  CHECK(board.only().not_audited == Texts{"XU3 has no model here and is in the way: declare a stand-in for it"});
+  CHECK(board.only().not_audited ==
+        Texts{"what XU3 does is not known, and it is in the way: declare a stand-in for it"});
   REQUIRE(board.only().unmodelled.size() == 1);
   CHECK_FALSE(board.only().unmodelled[0].taken_as_open);
 }
@@ -126,7 +127,7 @@ TEST_CASE("an unreadable card inside a subcircuit is found by the name of the po
 
 TEST_CASE("an input with several obstacles names them all") {
   CHECK(broken("R9 A 0 {47k*}\nXU3 A 0 B OPAMP\nXU4 A 0 B OPAMP\n").only().not_audited ==
-        Texts{"XU3, XU4 have no model here and are in the way: declare a stand-in for each", unread("5")[0]});
+        Texts{"what XU3, XU4 do is not known, and they are in the way: declare a stand-in for each", unread("5")[0]});
 }
 
 TEST_CASE("a source in the network that follows the current of a rail's source stops the audit") {

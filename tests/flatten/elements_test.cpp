@@ -304,3 +304,24 @@ TEST_CASE("a netlist without a single scope is an empty circuit with ground") {
   REQUIRE(d.circuit.nets.size() == 1);
   CHECK(d.text(d.circuit.nets[0].name) == "0");
 }
+
+TEST_CASE("words behind values that are no models are told in one note") {
+  Deck d;
+  d.model("RMOD", "R", {{"tc1", 0.001}});
+  d.element("R1", "a b", 1000.0, "garbage");
+  d.element("R2", "a b", 1000.0, "RMOD");
+  d.element("C1", "a b", 1e-9, "X7R");
+  d.flatten();
+  CHECK(d.said() ==
+        "note at 105: \"garbage\" behind the value of R1 is no model and is not used; so it is with 1 more\n");
+}
+
+TEST_CASE("a source without a value has none, and one taken at time zero is listed") {
+  Deck d;
+  d.element("V1", "a 0", {});
+  d.element("V2", "b 0", 0.0).at_time_zero = true;
+  d.flatten();
+  CHECK(d.unmodelled("V1").why == Why::no_value);
+  REQUIRE(d.circuit.at_time_zero.size() == 1);
+  CHECK(d.text(d.circuit.elements[d.circuit.at_time_zero[0].index()].name) == "V2");
+}

@@ -61,7 +61,10 @@ TEST_CASE("netlist elements: a source holds its DC value, or else what its funct
   CHECK(one("V1 a 0 {vcc/2}") == "v V1(a 0) = (/ vcc 2)");
   CHECK(one("V1 a 0 3.3 Rser=50m") == "v V1(a 0) = 3.3 Rser=0.05");
   CHECK(one("V1 a 0 18Vdc") == "v V1(a 0) = 18");
-  CHECK(one("V1 a 0") == "v V1(a 0) = 0");
+  CHECK(one("V1 a 0") == "v V1(a 0)");
+  CHECK(one("V1 a 0 SIN(2.5)") == "v V1(a 0) = 2.5");
+  CHECK(one("V1 a 0 AC 1") == "v V1(a 0) = 0");
+  CHECK(one("R1 a b {x} 1%") == "r R1(a b) = x tol=0.01|1");
   CHECK(one("I1 a 0 AC 1") == "i I1(a 0) = 0");
   CHECK(one("I1 a 0 1m") == "i I1(a 0) = 0.001");
   CHECK(one("V1 a 0 PULSE(1 2 0 1n)") == "v V1(a 0) = 1");
@@ -155,4 +158,20 @@ TEST_CASE("netlist elements: unknown letters are parts, the last word says what 
             "1 a b") ==
         "? \xC3\x84"
         "1(a) b");
+}
+
+TEST_CASE("netlist elements: a source that has but a function of time or a signal is marked as taken at time zero") {
+  const NetlistReading reading(
+      "title\nV1 a 0 PULSE(0 3.3 0 1n)\nV2 b 0 DC 5 PULSE(0 3.3 0 1n)\nV3 c 0\nV4 d 0 AC 1\nV5 e 0 5\nV6 f 0 SIN(2 1 "
+      "1k) AC 1\n");
+  std::string marks;
+  for (const model::ElementCard& element : reading.top().elements) marks += element.at_time_zero ? '1' : '0';
+  CHECK(marks == "100101");
+  CHECK(reading.element("V6") == "v V6(f 0) = 2");
+}
+
+TEST_CASE("netlist elements: an odd literal's place holds its last bracket") {
+  const NetlistReading reading("title\nR1 a b 10k (0805)\n");
+  REQUIRE(reading.netlist().odd_literals.size() == 1);
+  CHECK(reading.netlist().odd_literals[0].where.length == 10);
 }

@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include "parse/cards/elements.hpp"
+#include "parse/cards/number.hpp"
 #include "parse/cards/values.hpp"
 
 namespace parse {
@@ -46,10 +47,8 @@ class SourceReader {
       return read_part(words_);
     }
     words_.take_nodes(2);
-    words_.element.value = has_number(dc_)      ? dc_
-                           : has_number(start_) ? start_
-                           : strange_ == 1      ? word_
-                                                : model::Value{0.0};
+    words_.element.at_time_zero = !has_number(dc_) && has_number(start_);
+    words_.element.value = has_number(dc_) ? dc_ : has_number(start_) ? start_ : word_;
     const auto first = static_cast<std::uint32_t>(card_.reading().netlist.assignments.size() - parameters_);
     words_.element.parameters = {first, parameters_};
     return Outcome::element;
@@ -59,7 +58,10 @@ class SourceReader {
   // Takes what begins at word i; gives the next word.
   std::size_t take(std::size_t i) {
     if (card_.is(i, "dc")) return take_dc(i);
-    if (card_.is(i, "ac")) return skip_numbers(card_.is(i + 1, TokenKind::equals) ? i + 2 : i + 1, 2);
+    if (card_.is(i, "ac")) {
+      if (!has_number(start_)) start_ = 0.0;  // a signal alone: nothing at DC
+      return skip_numbers(card_.is(i + 1, TokenKind::equals) ? i + 2 : i + 1, 2);
+    }
     if (const TimeFunction* const function = function_at(card_, i)) return take_function(i, *function);
     if (card_.is_key(i)) return take_parameter(i);
     if (card_.is(i, TokenKind::equals)) return card_.fail(i, "expected key = value, found \"=\""), i;
@@ -96,13 +98,19 @@ class SourceReader {
       ++strange_;
       return card_.size();
     }
-    if (word.size() > function.name.size() + 1 && word.find('(') != std::string_view::npos)
-      return next;  // sin(0): one argument, zero
-    for (std::size_t argument = 0; next < card_.size() && !card_.is_key(next); ++argument, ++next) {
-      if (!is_value(card_, next)) break;
-      if (argument == function.argument) start_ = word_value(card_, next);
+    const bool starts = function.argument == no_argument;
+    if (starts) start_ = 0.0;
+    bool found = starts;
+    if (word.size() > function.name.size() + 1) {  // sin(0): one argument, no blank before it
+      const auto only = plain_number(word.substr(function.name.size() + 1, word.size() - function.name.size() - 2));
+      if (only && function.argument == 0) start_ = *only, found = true;
+    } else {
+      for (std::size_t argument = 0; next < card_.size() && !card_.is_key(next); ++argument, ++next) {
+        if (!is_value(card_, next)) break;
+        if (argument == function.argument) start_ = word_value(card_, next), found = true;
+      }
     }
-    if (next == i + 1 && !card_.is_key(next) && next < card_.size()) {
+    if (!found) {
       card_.fail_at(token.begin, token.end - token.begin,
                     fmt::format("expected numbers behind {}, found {}", word, card_.found(next)));
     }
@@ -130,7 +138,7 @@ class SourceReader {
   const ElementWords& words_;
   Card& card_;
   model::Value dc_;
-  model::Value start_;
+  model::Value start_;  // at time zero, of the last function
   model::Value word_;
   std::size_t strange_ = 0;  // words that are no part of a source
   std::uint32_t parameters_ = 0;

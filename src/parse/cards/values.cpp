@@ -58,6 +58,11 @@ std::optional<model::Value> literal_text(Card& card, std::string_view text, sour
     if (!literal->odd()) return model::Value{literal->builder};
     return odd_value(card, literal->builder, literal->spice, literal->tolerance, literal->bare_mega, where);
   }
+  // Shorter text would make another number of it.
+  if (auto refusal = literal_refusal(text)) {
+    card.fail_at(where.begin.offset, where.length, std::move(*refusal));
+    return std::nullopt;
+  }
   // 5%: a fraction where the builder writes it, 5 to SPICE.
   if (text.back() != '%') return std::nullopt;
   const auto percent = plain_number(text.substr(0, text.size() - 1));
@@ -168,13 +173,17 @@ bool has_number(const model::Value& value) {
   return !std::holds_alternative<std::monostate>(value) && !std::holds_alternative<base::NameId>(value);
 }
 
+source::Span literal_span(const Card& card, std::size_t first, std::size_t last) {
+  source::Span where = card.span(first, last);
+  const std::uint32_t end = where.begin.offset + where.length;
+  const bool closes = end < card.end() && card.between(end, end + 1) == ")";
+  if (closes && card.between(where.begin.offset, end).find('(') != std::string_view::npos) ++where.length;
+  return where;
+}
+
 std::optional<model::Value> literal_value(Card& card, std::size_t first, std::size_t last) {
-  const source::Span where = card.span(first, last);
-  std::uint32_t end = where.begin.offset + where.length;
-  if (end < card.end() && card.between(end, end + 1) == ")" &&
-      card.between(where.begin.offset, end).find('(') != std::string_view::npos)
-    ++end;
-  return literal_text(card, card.between(where.begin.offset, end), where);
+  const source::Span where = literal_span(card, first, last);
+  return literal_text(card, card.between(where.begin.offset, where.begin.offset + where.length), where);
 }
 
 model::Value word_value(Card& card, std::size_t i) {

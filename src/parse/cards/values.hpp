@@ -22,8 +22,12 @@ enum class Wanted : std::uint8_t {
   anything,    // what is neither stays a word
 };
 
-// The literal that stands in words first .. last, joined as they stand; nothing where there is none.
+// The literal that stands in words first .. last, joined as they stand; nothing where there is none. One that can be
+// read in two ways is a fault.
 [[nodiscard]] std::optional<model::Value> literal_value(Card& card, std::size_t first, std::size_t last);
+
+// Where words first .. last stand, with the bracket that closes behind them where one opens in them.
+[[nodiscard]] source::Span literal_span(const Card& card, std::size_t first, std::size_t last);
 
 // Word i alone: a number, a literal, an expression in braces or quotes, or else the word itself.
 [[nodiscard]] model::Value word_value(Card& card, std::size_t i);

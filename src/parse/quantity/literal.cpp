@@ -250,18 +250,13 @@ base::Error refusal(std::string_view text, std::string_view why) {
   return {fmt::format("\"{}\" {}", base::printable_short(text), why)};
 }
 
-}  // namespace
-
-bool Literal::odd() const {
-  return bare_mega || !std::isnan(tolerance) || builder != spice;
+bool parse_literal(std::string_view text, Parts& parts) {
+  Input input(text.data(), text.data() + text.size(), "");
+  return pegtl::parse<rules::literal, Note>(input, parts);
 }
 
-base::Result<Literal> read_literal(std::string_view text) {
-  Input input(text.data(), text.data() + text.size(), "");
-  Parts parts;
-  if (!pegtl::parse<rules::literal, Note>(input, parts)) {
-    return base::Error{fmt::format("{}, found \"{}\"", rules::literal_expected, base::printable_short(text))};
-  }
+// A literal of its parts, if it is one.
+base::Result<Literal> literal_of(std::string_view text, const Parts& parts) {
   if (parts.comma && parts.decimal.fraction.size() == 3 && parts.decimal.whole != "0") {
     return refusal(text, rules::comma_unclear);
   }
@@ -271,6 +266,26 @@ base::Result<Literal> read_literal(std::string_view text) {
   const auto builder = builder_value(parts);
   if (!builder) return refusal(text, rules::out_of_range);
   return Literal{*builder, spice_value(text), tolerance, parts.point.empty() && parts.scale == "M"};
+}
+
+}  // namespace
+
+bool Literal::odd() const {
+  return bare_mega || !std::isnan(tolerance) || builder != spice;
+}
+
+base::Result<Literal> read_literal(std::string_view text) {
+  Parts parts;
+  if (!parse_literal(text, parts))
+    return base::Error{fmt::format("{}, found \"{}\"", rules::literal_expected, base::printable_short(text))};
+  return literal_of(text, parts);
+}
+
+std::optional<std::string> literal_refusal(std::string_view text) {
+  Parts parts;
+  if (!parse_literal(text, parts)) return std::nullopt;
+  const auto literal = literal_of(text, parts);
+  return literal.ok() ? std::nullopt : std::optional{literal.error()};
 }
 
 }  // namespace parse
