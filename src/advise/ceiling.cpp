@@ -35,10 +35,10 @@ struct Curve {
 
 // With one end clipped the span only rises or falls with Rs, so the largest lies at the free optimum or where an end of
 // the range is just met.
-double span_ceiling(const model::Input& input, const model::OnePort& form, std::span<const double> ohms) {
+double span_ceiling(double open_reading, double short_reading, std::span<const double> ohms) {
   if (ohms.empty()) return 0;
   const auto [least, most] = std::ranges::minmax(ohms);
-  const Curve curve{input.reading_of(form.open_volts), input.reading_of(form.short_volts), least, most};
+  const Curve curve{open_reading, short_reading, least, most};
   double best = 0;
   const auto consider = [&](double source_ohms) {
     if (source_ohms > 0 && std::isfinite(source_ohms)) best = std::max(best, curve.span_at(source_ohms));
@@ -49,6 +49,13 @@ double span_ceiling(const model::Input& input, const model::OnePort& form, std::
   // A sensor that reaches zero ohms: the limit of a source resistance towards zero.
   if (least == 0 && most > 0) best = std::max(best, std::abs(clipped(curve.shorted) - clipped(curve.open)));
   return best;
+}
+
+std::optional<double> rail_ceiling(double bottom, double top, double least, double most) {
+  if (!(most > 0) || !(top > bottom)) return std::nullopt;
+  const double ratio = std::min(1.0, top / most);
+  const auto reading = [&](double rail) { return clipped((ratio * rail - bottom) / (top - bottom)); };
+  return std::max(0.0, reading(most) - reading(least));
 }
 
 }  // namespace advise

@@ -4,6 +4,7 @@
 #include <array>
 #include <cmath>
 #include <limits>
+#include <utility>
 #include <vector>
 
 #include "advise/search.hpp"
@@ -121,11 +122,18 @@ struct Candidate {
   double ohms = 0;
 };
 
+// The letter that says what an element is: the first of its name behind the instances' names.
+bool is_resistor(const model::PartName& part) {
+  const std::size_t dot = part.name.rfind('.');
+  const std::size_t first = dot == std::string::npos ? 0 : dot + 1;
+  return first < part.name.size() && (part.name[first] == 'R' || part.name[first] == 'r');
+}
+
 // The branch of that element where it is a fixed resistor above zero and not swept.
 std::optional<Candidate> as_candidate(const model::Divider& divider, const model::PartName& part,
                                       std::span<const model::SweptValues> swept) {
   const auto& branches = divider.whole.network.branches;
-  if (!part.element.valid()) return std::nullopt;
+  if (!part.element.valid() || !is_resistor(part)) return std::nullopt;
   for (std::uint32_t i = 0; i < branches.size(); ++i) {
     const auto* resistor = std::get_if<model::Resistor>(&branches[i].part);
     if (resistor == nullptr || branches[i].origin != model::BranchOrigin::element ||
@@ -172,35 +180,87 @@ bool can_follow(std::span<const model::SweptValues> swept) {
          std::ranges::none_of(swept, [](const auto& branch) { return branch.is_variable || branch.values.empty(); });
 }
 
+// The best that one resistor reaches.
+struct Outcome {
+  Reach reach;
+  double change = 0;  // logarithm of its ohms over the present ones
+  bool at_limit = false;
+  bool across_sensor = false;
+};
+
 // Whether `a` is to be told rather than `b`: more span, or as much with less of a change.
-bool better(const Found& a, double a_change, const Found& b, double b_change) {
+bool better(const Outcome& a, const Outcome& b) {
   constexpr double as_good = 1e-9;
-  return a.span > b.span + as_good || (a.span > b.span - as_good && a_change < b_change);
+  const double more = a.reach.span_use - b.reach.span_use;
+  return more > as_good || (more > -as_good && a.change < b.change);
+}
+
+// Whether a part far from its present value is as good left out or as a link, and then so.
+void settle_limit(Trials& trials, double present, double gap_limit, Outcome& outcome) {
+  constexpr double far = 10;
+  constexpr double as_good = 1 - 1e-3;
+  constexpr double rounding = 1e-12;
+  const double ohms = outcome.reach.ohms;
+  if (ohms < far * present && ohms > present / far) return;
+  const double limit = ohms > present ? std::numeric_limits<double>::infinity() : 0;
+  const Trial there = trials.at(limit, gap_limit);
+  if (!(there.room >= -rounding) || !(there.span >= as_good * outcome.reach.span_use)) return;
+  outcome.reach.ohms = limit;
+  outcome.reach.span_use = there.span;
+  outcome.at_limit = true;
+}
+
+bool is_across_sensor(const model::ProbedNetwork& whole, model::BranchId branch) {
+  const auto& nodes = whole.network.branches[branch.index()].nodes;
+  return whole.sensor_plus.valid() && ((nodes[0] == whole.sensor_plus && nodes[1] == whole.sensor_minus) ||
+                                       (nodes[1] == whole.sensor_plus && nodes[0] == whole.sensor_minus));
+}
+
+std::optional<Outcome> outcome_of(const model::Divider& divider, const Candidate& candidate, const States& states,
+                                  std::span<const std::vector<Override>> leakage, double gap_limit) {
+  constexpr double worth_telling = 1e-6;
+  auto trials = Trials::make(divider, candidate.branch, candidate.ohms, states, leakage);
+  if (!trials) return std::nullopt;
+  const auto found = largest_span(candidate.ohms, [&](double ohms) { return trials->at(ohms, gap_limit); });
+  if (!found || !(found->span >= worth_telling)) return std::nullopt;
+  Outcome outcome{{candidate.part->name, found->ohms, found->span},
+                  std::abs(std::log(found->ohms / candidate.ohms)),
+                  false,
+                  is_across_sensor(divider.whole, candidate.branch)};
+  settle_limit(*trials, candidate.ohms, gap_limit, outcome);
+  return outcome;
+}
+
+Offers choose(std::span<const Outcome> outcomes) {
+  const Outcome* best = nullptr;  // by ohms of its own before any that is at a limit
+  const Outcome* most = nullptr;
+  for (const Outcome& outcome : outcomes) {
+    if (most == nullptr || better(outcome, *most)) most = &outcome;
+    if (outcome.across_sensor) continue;
+    if (best == nullptr || (best->at_limit && !outcome.at_limit) ||
+        (best->at_limit == outcome.at_limit && better(outcome, *best)))
+      best = &outcome;
+  }
+  if (most == nullptr) return {};
+  if (best == nullptr) return {std::nullopt, most->reach};
+  constexpr double more = 1 + 1e-3;
+  constexpr double no_purpose = 2;
+  const double gain = most->reach.span_use / best->reach.span_use;
+  if (gain > no_purpose) return {most->reach, std::nullopt};
+  return {best->reach, gain > more ? std::optional(most->reach) : std::nullopt};
 }
 
 }  // namespace
 
-std::optional<Reach> best_resistor(const model::Divider& divider, std::span<const model::SweptValues> swept,
-                                   double gap_limit) {
-  if (!can_follow(swept)) return std::nullopt;
+Offers resistor_offers(const model::Divider& divider, std::span<const model::SweptValues> swept, double gap_limit) {
+  if (!can_follow(swept)) return {};
   const States states = swept.size() == 1 ? extremes(swept.front()) : some_points(swept);
   const auto leakage = leakages(divider.whole);
-  std::optional<Found> best;
-  double best_change = 0;
-  const model::PartName* best_part = nullptr;
-  for (const Candidate& candidate : candidates(divider, swept)) {
-    auto trials = Trials::make(divider, candidate.branch, candidate.ohms, states, leakage);
-    if (!trials) continue;
-    const auto found = largest_span(candidate.ohms, [&](double ohms) { return trials->at(ohms, gap_limit); });
-    if (!found) continue;
-    const double change = std::abs(std::log(found->ohms / candidate.ohms));
-    if (best && !better(*found, change, *best, best_change)) continue;
-    best = found;
-    best_change = change;
-    best_part = candidate.part;
-  }
-  if (!best) return std::nullopt;
-  return Reach{best_part->name, best->ohms, best->span};
+  std::vector<Outcome> outcomes;
+  for (const Candidate& candidate : candidates(divider, swept))
+    if (auto outcome = outcome_of(divider, candidate, states, leakage, gap_limit))
+      outcomes.push_back(std::move(*outcome));
+  return choose(outcomes);
 }
 
 }  // namespace advise

@@ -5,6 +5,7 @@
 
 #include "advise/reach.hpp"
 #include "audit/load.hpp"
+#include "audit/reading_form.hpp"
 #include "judge/judge.hpp"
 #include "network/linear.hpp"
 
@@ -16,24 +17,37 @@ bool sweeps_rail(const model::Divider& divider) {
                      [](const model::SweptBranch& swept) { return swept.quantity == model::SweptQuantity::volts; });
 }
 
+// A monitor's reading follows the rail in proportion, between ends that stand still: what rail_ceiling() is about.
+std::optional<double> monitor_ceiling(const model::Divider& divider, const Prepared& prepared,
+                                      const judge::Solved& solved) {
+  const auto low = still_volts(solved.nominal.low);
+  const auto high = still_volts(solved.nominal.high);
+  const auto& tap = solved.bare.pin;
+  const std::size_t last = tap.size() - 1;
+  const double crossed = tap.front() * prepared.at[last] - tap[last] * prepared.at.front();
+  const double size = std::fabs(tap.front() * prepared.at[last]) + std::fabs(tap[last] * prepared.at.front());
+  if (!low || !high || std::fabs(crossed) > 1e-9 * size) return std::nullopt;
+  const auto [least, most] = std::minmax_element(prepared.at.begin(), prepared.at.end());
+  return advise::rail_ceiling(*low, *low + (*high - *low) / divider.input.gain, *least, *most);
+}
+
 std::optional<double> ceiling(const model::Divider& divider, const Prepared& prepared, const judge::Solved& solved) {
-  if (sweeps_rail(divider)) {
-    // A divider scales a rail: at best its highest volts reach the end of the range.
-    const auto [low, high] = std::minmax_element(prepared.at.begin(), prepared.at.end());
-    return *high > 0 ? std::optional(std::clamp(1 - *low / *high, 0.0, 1.0)) : std::nullopt;
-  }
-  if (!divider.bare_form || solved.sensor_ohms.empty()) return std::nullopt;
-  return advise::span_ceiling(divider.input, *divider.bare_form, solved.sensor_ohms);
+  if (sweeps_rail(divider)) return monitor_ceiling(divider, prepared, solved);
+  if (solved.sensor_ohms.empty()) return std::nullopt;
+  const auto form = reading_form(divider, solved);
+  if (!form) return std::nullopt;
+  return advise::span_ceiling(form->open_volts, form->short_volts, solved.sensor_ohms);
 }
 
 void add_reach(const model::Divider& divider, const Prepared& prepared, model::Figures& figures) {
   if (!divider.bare.network.linear || prepared.swept.empty()) return;
-  const auto reach =
-      advise::best_resistor(divider, prepared.swept, judge::limit_of(divider.input, model::RuleId::rail_gap));
-  if (!reach) return;
-  figures.span_reachable = reach->span_use;
-  figures.best_part = reach->part;
-  figures.best_ohms = reach->ohms;
+  const auto offers =
+      advise::resistor_offers(divider, prepared.swept, judge::limit_of(divider.input, model::RuleId::rail_gap));
+  if (offers.other) figures.other = model::Offer{offers.other->part, offers.other->ohms, offers.other->span_use};
+  if (!offers.best) return;
+  figures.span_reachable = offers.best->span_use;
+  figures.best_part = offers.best->part;
+  figures.best_ohms = offers.best->ohms;
 }
 
 // Of a linear network the resistance at the pin is a ratio of linear functions of the sensor's, so its largest is at an

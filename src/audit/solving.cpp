@@ -6,6 +6,7 @@
 
 #include "audit/advice.hpp"
 #include "audit/plans.hpp"
+#include "audit/reading_form.hpp"
 #include "judge/judge.hpp"
 #include "sensor/law.hpp"
 
@@ -79,6 +80,7 @@ class Solving {
     input.sweep = judge::curve_of(input.divider.input, *solved, std::string(kind->measurand), std::string(kind->unit));
     input.figures = judge::figures_of(input.divider, *solved, *input.sweep);
     add_advice(input.divider, job.prepared, *solved, input.figures);
+    settle_form(input.divider, *solved);
     input.audited = true;
     judge(input);
   }

@@ -1,6 +1,7 @@
 #include "judge/wording.hpp"
 
 #include <algorithm>
+#include <cmath>
 #include <fmt/format.h>
 
 #include "base/text.hpp"
@@ -41,15 +42,35 @@ std::string list_text(const std::vector<std::string>& names) {
   return text;
 }
 
+std::string offer_text(const model::Offer& offer) {
+  const std::string part = base::printable_short(offer.part);
+  const std::string reached = percent_text(offer.span_use);
+  if (offer.ohms == 0) return fmt::format("{} as a link reaches {}", part, reached);
+  if (std::isinf(offer.ohms)) return fmt::format("without {} it reaches {}", part, reached);
+  return fmt::format("{} = {} reaches {}", part, base::si_text(offer.ohms, "ohm", 3), reached);
+}
+
 std::string reach_text(const model::Figures& figures) {
   if (!figures.span_reachable || !figures.best_ohms || figures.best_part.empty()) return {};
-  return fmt::format("{} = {} reaches {}", base::printable_short(figures.best_part),
-                     base::si_text(*figures.best_ohms, "ohm", 3), percent_text(*figures.span_reachable));
+  return offer_text({figures.best_part, *figures.best_ohms, *figures.span_reachable});
 }
 
 std::optional<double> ceiling_of(const model::Figures& figures) {
-  if (!figures.span_best || !figures.span_reachable) return figures.span_best;
-  return std::max(*figures.span_best, *figures.span_reachable);
+  if (!figures.span_best) return std::nullopt;
+  return std::max(
+      {*figures.span_best, figures.span_reachable.value_or(0), figures.other ? figures.other->span_use : 0.0});
+}
+
+std::string unliftable_text(const model::AuditedInput& input, std::size_t point, std::string_view unit) {
+  const model::Divider& divider = input.divider;
+  const bool rail = input.sweep->sensor_ohms.empty();
+  const bool to_ground = divider.upper_rail == "0" || divider.lower_rail == "0";
+  const double volts = input.sweep->at[point];
+  if (!rail || !to_ground || volts < 0 || !(volts <= divider.input.nominal_low)) return {};
+  return fmt::format(
+      "no divider lifts {} off it; judge the rail over the range in which it is used, or begin the "
+      "converter's range lower",
+      measurand_text(volts, unit));
 }
 
 }  // namespace judge

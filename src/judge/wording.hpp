@@ -30,11 +30,18 @@ struct Compared {
 // "R1, R2 and R3", made printable; of more than six the first five, then "and 4 more". Empty for none.
 [[nodiscard]] std::string list_text(const std::vector<std::string>& names);
 
-// "R7 = 14.2 kohm reaches 23 %", or empty where no resistor was found that can be varied.
+// "R7 = 14.2 kohm reaches 23 %", "R7 as a link reaches 23 %" or "without R7 it reaches 23 %".
+[[nodiscard]] std::string offer_text(const model::Offer& offer);
+
+// The offer that span_reachable speaks of, or empty where no resistor was found that can be varied.
 [[nodiscard]] std::string reach_text(const model::Figures& figures);
 
-// The most that any change of a resistance is known to reach: the ceiling with the open and short volts held, or more
-// where one resistor also moves those. Nothing where neither is known.
+// The most that the arms' resistances are known to reach: the ceiling with the readings of an open and a shorted sensor
+// held, or more where one resistor also moves those. Nothing where the former is not known.
 [[nodiscard]] std::optional<double> ceiling_of(const model::Figures& figures);
+
+// Where an end of a watched rail's sweep is itself at or below the low end of the range, no divider to ground lifts it:
+// what to do instead, as a clause. Empty elsewhere.
+[[nodiscard]] std::string unliftable_text(const model::AuditedInput& input, std::size_t point, std::string_view unit);
 
 }  // namespace judge

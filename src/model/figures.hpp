@@ -22,12 +22,20 @@ struct Contributor {
   std::string name;  // as reports name it; empty for none
 };
 
+// A change of one resistor, and the span_use that it reaches.
+struct Offer {
+  std::string part;
+  double ohms = 0;  // 0: as a link; infinite: left out
+  double span_use = 0;
+};
+
 struct Figures {
 #define FIGURE(name, unit, sentence) std::optional<double> name;
 #include "model/figures.def"
 #undef FIGURE
   std::string best_part;            // the resistor that span_reachable speaks of
-  std::optional<double> best_ohms;  // and its value there
+  std::optional<double> best_ohms;  // and its value there; 0: as a link; infinite: left out
+  std::optional<Offer> other;       // what reaches more, but where that may well be the purpose (advise::Offers)
 
   // Where on the sweep (index of the point) the worst of each is.
   std::size_t gap_low_point = 0;

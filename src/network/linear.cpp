@@ -93,4 +93,12 @@ double ohms_at(const model::OnePort& form, double volts) {
   return ohms >= 0 ? ohms : std::numeric_limits<double>::quiet_NaN();
 }
 
+// With V = (Vopen Rx + Vshort Rs)/(Rx + Rs) for both, the denominators cancel.
+base::Result<model::OnePort> quotient_form(const model::OnePort& over, const model::OnePort& under) {
+  const double source_ohms = under.source_ohms * under.short_volts / under.open_volts;
+  if (!(source_ohms > 0) || !std::isfinite(source_ohms))
+    return base::Error{"the quotient has no finite source resistance above zero"};
+  return model::OnePort{over.open_volts / under.open_volts, over.short_volts / under.short_volts, source_ohms};
+}
+
 }  // namespace network

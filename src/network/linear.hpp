@@ -37,4 +37,9 @@ using Overrides = std::span<const model::Override>;
 // where no resistance gives that voltage.
 [[nodiscard]] double ohms_at(const model::OnePort& form, double volts);
 
+// The form of over/under, two voltages of one network with the same resistor free, again as a function of that resistor
+// (the bilinear theorem): its "volts" are quotients. Error: they have no such form (the divisor is zero or changes its
+// sign within the resistances above zero).
+[[nodiscard]] base::Result<model::OnePort> quotient_form(const model::OnePort& over, const model::OnePort& under);
+
 }  // namespace network

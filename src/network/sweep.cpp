@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 #include <fmt/format.h>
+#include <limits>
 #include <optional>
 #include <variant>
 
@@ -132,6 +133,13 @@ base::Result<FreeBranch> FreeBranch::make(const model::Network& network, model::
 }
 
 double FreeBranch::share(double value) const {
+  if (is_resistor_ && std::isinf(value)) {
+    // What is left of the second resistance where the rest of the network is open: there its volts are rounding.
+    constexpr double dust = 1e-9;
+    const double rest = second_ - thevenin_ohms_;
+    return rest > dust * second_ ? second_ * (second_ / rest) / (second_ - first_)
+                                 : std::numeric_limits<double>::quiet_NaN();
+  }
   const double linear = (value - first_) / (second_ - first_);
   if (!is_resistor_) return linear;
   return linear * (second_ * second_ / (thevenin_ohms_ * second_ + value * (second_ - thevenin_ohms_)));

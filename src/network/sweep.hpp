@@ -39,7 +39,8 @@ class FreeBranch {
                                                      std::span<const Overrides> conditions,
                                                      std::span<const model::NodeId> watched);
 
-  // Volts of the w-th watched node under the c-th condition with the branch at `value` (above zero for ohms).
+  // Volts of the w-th watched node under the c-th condition with the branch at `value` (ohms from zero, a link, to
+  // infinity, an open circuit; not a number where the network has no solution with it so).
   [[nodiscard]] double volts(std::size_t c, std::size_t w, double value) const { return mixed(c, w, share(value)); }
 
   // The same in two steps: what depends on the value alone, and what depends on the node and condition.

@@ -76,8 +76,15 @@ void found_rows(Page& page, const model::AuditedInput& input, const model::Board
   optional_row(page, "load", joined(divider.load));
   if (divider.bare_form) {
     const model::OnePort& form = *divider.bare_form;
-    page.row("sensor sees", fmt::format("{}; tap at {} open, {} shorted", base::si_text(form.source_ohms, "ohm"),
-                                        base::si_text(form.open_volts, "V"), base::si_text(form.short_volts, "V")));
+    // Once solved, the form is that of the reading: where an end of the range moves with the divider, not the tap's
+    // own.
+    const bool of_reading = input.sweep && (divider.bare.low.valid() || divider.bare.high.valid());
+    if (of_reading)
+      page.row("read as", fmt::format("{} open, {} shorted, halfway at {}", base::si_text(form.open_volts, "V"),
+                                      base::si_text(form.short_volts, "V"), base::si_text(form.source_ohms, "ohm")));
+    else
+      page.row("sensor sees", fmt::format("{}; tap at {} open, {} shorted", base::si_text(form.source_ohms, "ohm"),
+                                          base::si_text(form.open_volts, "V"), base::si_text(form.short_volts, "V")));
   }
 }
 

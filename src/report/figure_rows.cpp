@@ -52,6 +52,15 @@ bool known(const std::optional<double>& figure) {
   return figure && std::isfinite(*figure);
 }
 
+// Less than a millionth of an LSB is what rounding leaves.
+bool is_rounding(const std::optional<double>& lsb) {
+  return lsb && std::fabs(*lsb) < 1e-6;
+}
+
+std::string lsb_text(double lsb, int digits = 4) {
+  return base::number_text(is_rounding(lsb) ? 0.0 : lsb, digits) + " LSB";
+}
+
 void figure_row(Page& page, std::string_view label, const std::string& value, const std::string& remark) {
   const std::size_t width = columns(value);
   const std::size_t pad = width < value_columns ? value_columns - width : 1;
@@ -69,18 +78,25 @@ std::string swing_text(const model::AuditedInput& input) {
                      at_text(input, static_cast<std::size_t>(high - volts.begin())));
 }
 
+// "with R1 at 11.5 kohm"
+std::string best_text(const model::Figures& figures) {
+  if (!figures.best_ohms) return {};
+  const std::string part = base::printable_short(figures.best_part, 40);
+  if (*figures.best_ohms == 0) return fmt::format("with {} as a link", part);
+  if (std::isinf(*figures.best_ohms)) return fmt::format("without {}", part);
+  return fmt::format("with {} at {}", part, base::si_text(*figures.best_ohms, "ohm"));
+}
+
 void span_rows(Page& page, const model::AuditedInput& input) {
   const model::Figures& figures = input.figures;
   const bool rail_swept = input.sweep && input.sweep->sensor_ohms.empty();
   if (known(figures.span_use)) figure_row(page, "span used", percent(*figures.span_use), swing_text(input));
-  if (known(figures.span_best))
+  // One resistor may reach beyond what the held open and shorted volts allow: then those are no ceiling.
+  if (known(figures.span_best) && !(figures.span_reachable.value_or(0) > (1 + 1e-6) * *figures.span_best))
     figure_row(page, "span ceiling", percent(*figures.span_best),
                rail_swept ? "over this range of the rail" : "with the tap's open and shorted volts held");
-  if (!known(figures.span_reachable)) return;
-  const std::string part = base::printable_short(figures.best_part, 40);
-  figure_row(
-      page, "within reach", percent(*figures.span_reachable),
-      known(figures.best_ohms) ? fmt::format("with {} at {}", part, base::si_text(*figures.best_ohms, "ohm")) : "");
+  if (known(figures.span_reachable))
+    figure_row(page, "within reach", percent(*figures.span_reachable), best_text(figures));
 }
 
 void gap_rows(Page& page, const model::AuditedInput& input) {
@@ -93,22 +109,22 @@ void gap_rows(Page& page, const model::AuditedInput& input) {
 
 void error_rows(Page& page, const model::AuditedInput& input) {
   const model::Figures& figures = input.figures;
+  const bool rounding = is_rounding(figures.load_error_lsb);  // which is worst nowhere
   if (known(figures.load_error_lsb)) {
-    std::string remark = at_text(input, figures.load_error_point);
-    if (*figures.load_error_lsb > 0 && !figures.largest_load.name.empty())
+    std::string remark = rounding ? "" : at_text(input, figures.load_error_point);
+    if (!figures.largest_load.name.empty())
       remark += fmt::format("{}most of it by {}", remark.empty() ? "" : ", ",
                             base::printable_short(figures.largest_load.name, 60));
-    figure_row(page, "load error", base::number_text(*figures.load_error_lsb) + " LSB", remark);
+    figure_row(page, "load error", lsb_text(*figures.load_error_lsb), remark);
   }
-  if (known(figures.load_error_measurand))
+  if (known(figures.load_error_measurand) && !rounding)
     figure_row(page, known(figures.load_error_lsb) ? "" : "load error",
                measurand_text(input, *figures.load_error_measurand, 3),
                at_text(input, figures.load_error_measurand_point));
   if (known(figures.pin_source_ohms))
     figure_row(page, "pin behind", base::si_text(*figures.pin_source_ohms, "ohm"), "at most");
   if (known(figures.engine_gap_lsb))
-    figure_row(page, "engine gap", base::number_text(*figures.engine_gap_lsb, 2) + " LSB",
-               "between simulator and closed form");
+    figure_row(page, "engine gap", lsb_text(*figures.engine_gap_lsb, 2), "between simulator and closed form");
 }
 
 }  // namespace

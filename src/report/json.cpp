@@ -66,7 +66,7 @@ Json figures_of(const model::Figures& figures) {
 #define FIGURE(name, unit, sentence) put(out, #name, figures.name);
 #include "model/figures.def"
 #undef FIGURE
-  if (figures.best_ohms) put(out, "best_part", figures.best_part);
+  put(out, "best_part", figures.best_part);
   put(out, "best_ohms", figures.best_ohms);
   return out;
 }

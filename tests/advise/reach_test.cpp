@@ -9,7 +9,7 @@
 #include "dividers.hpp"
 #include "network/linear.hpp"
 
-using advise::best_resistor;
+using advise::resistor_offers;
 using advise_test::Made;
 using network_test::node;
 
@@ -26,7 +26,7 @@ std::vector<double> thermistor() {
 std::optional<advise::Reach> best_over(const model::Divider& divider, const std::vector<double>& values,
                                        double gap_limit) {
   const model::SweptValues swept{divider.whole.swept.front().branch, false, values};
-  return best_resistor(divider, {&swept, 1}, gap_limit);
+  return resistor_offers(divider, {&swept, 1}, gap_limit).best;
 }
 
 double geometric_mean(const std::vector<double>& ohms) {
@@ -239,11 +239,11 @@ TEST_CASE("branches that move together are followed point by point") {
   }
   made.divider.whole.swept = {{top, model::SweptQuantity::ohms, {}}, {bottom, model::SweptQuantity::ohms, {}}};
   // At the far end the reading is 10k/(R1 + 10k): by hand, 0.9 at R1 = 10k/9; the other gap is zero.
-  const auto reach = best_resistor(made.finished(), swept, -1).value();
-  CHECK(reach.ohms == Approx(10).epsilon(1e-6));  // a thousandth of the present: the search's end
-  CHECK(reach.span_use == Approx(10e3 / 10010).epsilon(1e-9));
+  const auto reach = resistor_offers(made.finished(), swept, -1).best.value();
+  CHECK(reach.ohms == 0);  // the smaller, the better: as a link
+  CHECK(reach.span_use == Approx(1).epsilon(1e-12));
   for (auto& value : swept[1].values) value = std::max(value, 500.0);
-  const auto held = best_resistor(made.finished(), swept, 0.025).value();
+  const auto held = resistor_offers(made.finished(), swept, 0.025).best.value();
   CHECK(held.ohms == Approx(10e3 / 0.975 - 10e3).epsilon(1e-6));
 }
 
@@ -256,9 +256,9 @@ TEST_CASE("without a fixed resistor to vary, or without a sweep to follow, there
 
   Made residual = advise_test::sensor_below(10e3);
   const std::vector<model::SweptValues> variable{{residual.sensor, true, sensor}};
-  CHECK_FALSE(best_resistor(residual.finished(), variable, 0).has_value());
+  CHECK_FALSE(resistor_offers(residual.finished(), variable, 0).best.has_value());
   const std::vector<model::SweptValues> ohms{{residual.sensor, false, sensor}};
-  CHECK(best_resistor(residual.finished(), ohms, 0).value().ohms == Approx(std::sqrt(1e7)).epsilon(1e-6));
+  CHECK(resistor_offers(residual.finished(), ohms, 0).best.value().ohms == Approx(std::sqrt(1e7)).epsilon(1e-6));
 
   Made nameless = advise_test::sensor_below(10e3);
   nameless.divider.upper.clear();
@@ -267,5 +267,79 @@ TEST_CASE("without a fixed resistor to vary, or without a sweep to follow, there
   Made jumper = advise_test::sensor_below(0);
   CHECK_FALSE(best_over(jumper.finished(), sensor, 0).has_value());
 
-  CHECK_FALSE(best_resistor(good.finished(), {}, 0).has_value());
+  CHECK_FALSE(resistor_offers(good.finished(), {}, 0).best.has_value());
+}
+
+TEST_CASE(
+    "a linearising resistor across the sensor is offered to be left out, and not in place of the one that sets the "
+    "span") {
+  // By hand: with R2 across it the sensor of 1 to 9 kohm is 0.9 to 4.74 kohm; R1 at their geometric mean reaches
+  // (sqrt k - 1)/(sqrt k + 1) of that k. Without R2, R1 as it is: 9/(9 + 2) - 1/(1 + 2).
+  const std::vector<double> sensor{1e3, 9e3};
+  for (const double ohms : {2e3, 60.0}) {
+    Made made = advise_test::sensor_below(ohms);
+    made.element(made.divider.lower, "R2", 2, 0, 10e3);
+    made.divider.whole.sensor_plus = node(2);
+    made.divider.whole.sensor_minus = node(0);
+    const model::SweptValues swept{made.sensor, false, sensor};
+    const auto offers = resistor_offers(made.finished(), {&swept, 1}, 0);
+    const double k = (9.0 * 10 / 19) / (1.0 * 10 / 11);
+    CHECK(offers.best.value().part == "R1");
+    CHECK(offers.best->span_use == Approx((std::sqrt(k) - 1) / (std::sqrt(k) + 1)).epsilon(1e-9));
+    if (ohms != 2e3) {
+      CHECK_FALSE(offers.other.has_value());  // R1 is far off: nothing else does as well
+      continue;
+    }
+    CHECK(offers.other.value().part == "R2");
+    CHECK(std::isinf(offers.other->ohms));
+    CHECK(offers.other->span_use == Approx(9.0 / 11 - 1.0 / 3).epsilon(1e-12));
+  }
+}
+
+TEST_CASE("a resistor in series with the sensor that only costs span is best as a link") {
+  Made made = advise_test::with_volts(3.3);
+  made.fixed = made.element(made.divider.upper, "R1", 1, 2, 3e3);
+  made.element(made.divider.lower, "R2", 2, 3, 3.3e3);
+  made.sensor = made.element(made.divider.lower, "RT1", 3, 0, 1);
+  advise_test::sweep_sensor(made);
+  const model::SweptValues swept{made.sensor, false, {1e3, 9e3}};
+  const auto offers = resistor_offers(made.finished(), {&swept, 1}, 0);
+  CHECK(offers.best.value().part == "R1");
+  CHECK(offers.other.value().part == "R2");
+  CHECK(offers.other->ohms == 0);
+  CHECK(offers.other->span_use == Approx(0.5).epsilon(1e-12));  // 9/12 - 1/4, by hand
+}
+
+TEST_CASE("only resistors are offered, and only where they reach something") {
+  const std::vector<double> sensor{1e3, 9e3};
+  Made source = advise_test::sensor_below(3e3);
+  source.divider.upper.front().name = "B1";
+  CHECK_FALSE(best_over(source.finished(), sensor, 0).has_value());
+  source.divider.upper.front().name = "XBED1.r1";
+  CHECK(best_over(source.finished(), sensor, 0).has_value());
+
+  Made dangling = advise_test::with_volts(3.3);
+  dangling.fixed = dangling.element(dangling.divider.upper, "R1", 1, 2, 10e3);
+  dangling.element(dangling.divider.lower, "R2", 2, 0, 10e3);
+  dangling.sensor = dangling.element(dangling.divider.lower, "RT1", 2, 3, 1);  // its other end goes nowhere
+  advise_test::sweep_sensor(dangling);
+  const model::SweptValues swept{dangling.sensor, false, sensor};
+  const auto offers = resistor_offers(dangling.finished(), {&swept, 1}, 0);
+  CHECK_FALSE(offers.best.has_value());
+  CHECK_FALSE(offers.other.has_value());
+}
+
+TEST_CASE("a resistor across the sensor that takes more than half of the span has no such purpose") {
+  // By hand: 100 ohm across 1 to 9 kohm leaves k = 1.0877, and with R1 at its best 2.1 % of the range; without it R1 =
+  // 1 kohm reaches 9/10 - 1/2.
+  Made made = advise_test::sensor_below(1e3);
+  made.element(made.divider.lower, "R2", 2, 0, 100);
+  made.divider.whole.sensor_plus = node(2);
+  made.divider.whole.sensor_minus = node(0);
+  const model::SweptValues swept{made.sensor, false, {1e3, 9e3}};
+  const auto offers = resistor_offers(made.finished(), {&swept, 1}, 0);
+  CHECK(offers.best.value().part == "R2");
+  CHECK(std::isinf(offers.best->ohms));
+  CHECK(offers.best->span_use == Approx(0.4).epsilon(1e-12));
+  CHECK_FALSE(offers.other.has_value());
 }

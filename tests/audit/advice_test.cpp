@@ -42,6 +42,49 @@ TEST_CASE("a monitored rail can use no more of the range than it swings") {
   CHECK(found.span_best.value_or(0) == Approx(0.75).epsilon(1e-12));
 }
 
+TEST_CASE("a monitored rail can use more of a range that begins above ground") {
+  // By hand: 15 V at the top of 1 to 2.5 V puts 9 V at 1.5 V, so 1 V of 1.5 V is used.
+  const auto found = figures("R1 BATT A 30k\nR2 A 0 5k\n",
+                             "[converter.ADC]\nbits = 12\nlow = 1\nhigh = 2.5\ninputs = [\"A\"]\n[sensor.BATT]\nkind = "
+                             "\"voltage\"\nfrom = 9\nto = 15\n");
+  CHECK(found.span_best.value_or(0) == Approx(2.0 / 3).epsilon(1e-12));
+}
+
+TEST_CASE("where an end of the range is a net of the chain, ceiling and one-port form are those of the reading") {
+  // A/REFP = X/(R1 + X) whatever R0: open 1, short 0, source resistance R1 (by hand). In the middle of the sweep, at
+  // 5 kohm, REFP is 3.3 V x 6/9 = 2.2 V: those are the volts that a reading of 1 is given as.
+  const Board board("title\n.param X=1k\nV1 VCC 0 3.3\nR0 VCC REFP 3k\nR1 REFP A 1k\nRS A 0 {X}\n",
+                    "[converter.ADC]\nbits = 12\nhigh = \"REFP\"\ninputs = [\"A\"]\n" + sensor);
+  const auto run = board.audit();
+  const auto& audited = input(run, "A");
+  CHECK(audited.figures.span_use.value_or(0) == Approx(0.4).epsilon(1e-9));
+  CHECK(audited.figures.span_best.value_or(0) == Approx(0.5).epsilon(1e-9));
+  REQUIRE(audited.divider.bare_form);
+  CHECK(audited.divider.bare_form->open_volts == Approx(2.2).epsilon(1e-9));
+  CHECK(audited.divider.bare_form->short_volts == Approx(0).margin(1e-12));
+  CHECK(audited.divider.bare_form->source_ohms == Approx(1000).epsilon(1e-9));
+  // Each of the sweep's bare volts gives its resistance back: Rx = Rs (Vshort - V)/(V - Vopen).
+  for (std::size_t i = 0; i < audited.sweep->at.size(); ++i) {
+    const double volts = audited.sweep->bare_volts[i];
+    CHECK(1000 * (0 - volts) / (volts - 2.2) == Approx(audited.sweep->at[i]).epsilon(1e-9));
+  }
+}
+
+TEST_CASE("where the low end of the range is the divider's foot the ceiling is that of the quotient") {
+  // u = (A - LO)/(9 - LO) = 3.3 X/(9 (R1 + X) + 5.7 R2) (by hand): open 3.3/9, short 0; k = 9 uses half of that at
+  // best.
+  const auto found = figures("V1 VCC 0 3.3\nR1 VCC A 10k\nRS A LO {X}\nR2 LO 0 100k\n",
+                             "[converter.ADC]\nbits = 12\nlow = \"LO\"\nhigh = 9\ninputs = [\"A\"]\n" + sensor);
+  CHECK(found.span_best.value_or(0) == Approx(3.3 / 9 / 2).epsilon(1e-9));
+  CHECK(found.span_best.value_or(0) > found.span_use.value_or(1));
+}
+
+TEST_CASE("a reading without a one-port form has no ceiling") {
+  const auto found = figures("V1 VCC 0 3.3\nR1 VCC A 10k\nRS A 0 {X}\n",
+                             "[converter.ADC]\nbits = 12\nhigh = \"A\"\ninputs = [\"A\"]\n" + sensor);
+  CHECK_FALSE(found.span_best.has_value());
+}
+
 TEST_CASE("the source resistance at the pin is the largest of the sweep, sense path included") {
   // 9 kohm parallel to 1 kohm is 900 ohm, and 100 ohm of the sense path behind it (Thevenin).
   const auto found = figures("V1 VCC 0 3.3\nR1 VCC T 1k\nRS T 0 {X}\nR2 T A 100\n", converter("\"A\"") + sensor);

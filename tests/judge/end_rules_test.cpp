@@ -216,3 +216,21 @@ TEST_CASE("off-scale: an offset in volts at the pin counts for as many LSB more 
   input.figures.gap_high = -4.1 / 4096;
   CHECK(findings_of(RuleId::off_scale, input).size() == 1);
 }
+
+TEST_CASE("rail-gap and off-scale: no advice on arms where the rail itself begins at or below the range") {
+  auto input = reading({0, 0.5, 0.9});
+  input.sweep->sensor_ohms.clear();
+  input.sweep->unit = "V";
+  input.sweep->at = {0, 2, 4};
+  input.divider.upper_rail = "BATT";
+  input.divider.lower_rail = "0";
+  CHECK(findings_of(RuleId::rail_gap, input)
+            .at(0)
+            .message.ends_with("; no divider lifts 0 V off it; judge the rail over the range in which it is used, or "
+                               "begin the converter's range lower"));
+  input.figures.gap_low = -0.1;
+  CHECK(findings_of(RuleId::off_scale, input).at(0).message.find("; no divider lifts 0 V off it") != std::string::npos);
+  // A divider to another rail can lift it.
+  input.divider.lower_rail = "+3V3";
+  CHECK(findings_of(RuleId::off_scale, input).at(0).message.find("no divider lifts") == std::string::npos);
+}

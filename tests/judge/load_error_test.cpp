@@ -121,8 +121,9 @@ TEST_CASE("load-error: what would help follows what is named") {
     return findings_of(RuleId::load_error, input).at(0).message;
   };
   CHECK(message(LoadKind::rail_resistance, "the source resistance of a rail")
-            .ends_with("the source resistance of a rail contributes most; a stiffer rail, less current out of it, or a "
-                       "range that ends on that rail lessens it"));
+            .ends_with(
+                "the source resistance of a rail contributes most; a stiffer rail or less current out of it lessens "
+                "it, and on one rail a divider and its range sag alike"));
   CHECK(message(LoadKind::input_resistance, "the input resistance")
             .ends_with("the input resistance contributes most; less resistance in the arms and before the pin, or a "
                        "buffer, lessens it"));

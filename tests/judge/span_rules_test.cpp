@@ -1,4 +1,6 @@
 // span-use and span-efficiency.
+#include <limits>
+
 #include <catch2/catch.hpp>
 
 #include "judge/fixtures.hpp"
@@ -42,10 +44,10 @@ TEST_CASE("span-use: a poor swing is a warning that says the ceiling and what on
   CHECK(found[0].message ==
         "the reading uses 12 % of the range, from 31 % at 125 degC to 43 % at -40 degC, where 50 % is the least "
         "accepted; "
-        "84 % is the most any resistance reaches with this sensor; R7 = 14.2 kohm reaches 81.3 %");
+        "84 % can be reached with this sensor; R7 = 14.2 kohm reaches 81.3 %");
 }
 
-TEST_CASE("span-use: where even the ceiling is below the limit it is a note that no resistance reaches it") {
+TEST_CASE("span-use: where even the ceiling is below the limit it is a note that no single resistor reaches it") {
   auto input = poor_span();
   set_reach(input, 0.24, 0.23);
   const auto found = findings_of(RuleId::span_use, input);
@@ -54,9 +56,13 @@ TEST_CASE("span-use: where even the ceiling is below the limit it is a note that
   CHECK(found[0].message ==
         "the reading uses 12 % of the range, from 31 % at 125 degC to 43 % at -40 degC, where 50 % is the least "
         "accepted; "
-        "no resistance reaches it: 24 % is the most with this sensor (R7 = 14.2 kohm reaches 23 %), so it takes gain "
-        "or a "
-        "smaller reference");
+        "no value of a single resistor reaches it: R7 = 14.2 kohm reaches 23 %, so it takes gain or a smaller "
+        "reference");
+  input.figures.span_reachable.reset();
+  CHECK(findings_of(RuleId::span_use, input)
+            .at(0)
+            .message.ends_with("accepted; 24 % is the most between the readings of an open and a shorted sensor, so it "
+                               "takes gain or a smaller reference"));
 }
 
 TEST_CASE("span-use: a ceiling of exactly the limit is within reach") {
@@ -178,5 +184,41 @@ TEST_CASE("span-use: one resistor that also moves the ends may reach beyond the 
   set_reach(input, 0.40, 0.55);
   const auto found = findings_of(RuleId::span_use, input);
   CHECK(found.at(0).level == Level::warning);
-  CHECK(found.at(0).message.find("55 % is the most any resistance reaches") != std::string::npos);
+  CHECK(found.at(0).message.ends_with("is the least accepted; R7 = 14.2 kohm reaches 55 %"));
+}
+
+TEST_CASE("span-use: gain is asked for only where the sensor itself cannot do it") {
+  // k = 1000: (sqrt k - 1)/(sqrt k + 1) = 93.9 %, with more than one resistor changed; k = 4: 33.3 %.
+  auto input = poor_span();
+  set_reach(input, 0.24, 0.23);
+  input.sweep->sensor_ohms = {100e3, 10e3, 100};
+  CHECK(findings_of(RuleId::span_use, input).at(0).level == Level::note);
+  CHECK(findings_of(RuleId::span_use, input)
+            .at(0)
+            .message.ends_with("no value of a single resistor reaches it: R7 = 14.2 kohm reaches 23 %; the sensor "
+                               "itself allows 93.9 % of a full swing, so more than one value must "
+                               "change"));
+  input.sweep->sensor_ohms = {400, 200, 100};
+  CHECK(findings_of(RuleId::span_use, input).at(0).message.ends_with(", so it takes gain or a smaller reference"));
+}
+
+TEST_CASE(
+    "span-use: a part that would better be left out or be a link is told beside the resistor that sets the span") {
+  auto input = poor_span();
+  set_reach(input, 0.40, 0.38);
+  input.figures.other = model::Offer{"R8", std::numeric_limits<double>::infinity(), 0.61};
+  auto found = findings_of(RuleId::span_use, input);
+  CHECK(found.at(0).level == Level::warning);
+  CHECK(found.at(0).message.ends_with("; R7 = 14.2 kohm reaches 38 %, without R8 it reaches 61 %"));
+  input.figures.other = model::Offer{"R8", 0, 0.61};
+  found = findings_of(RuleId::span_use, input);
+  CHECK(found.at(0).message.ends_with("; R7 = 14.2 kohm reaches 38 %, R8 as a link reaches 61 %"));
+}
+
+TEST_CASE("span-efficiency: what leaving a part out would reach does not count") {
+  auto input = sound_input();
+  input.figures.span_use = 0.6;
+  set_reach(input, 0.65, 0.61);
+  input.figures.other = model::Offer{"R8", std::numeric_limits<double>::infinity(), 0.9};
+  CHECK(findings_of(RuleId::span_efficiency, input).empty());
 }

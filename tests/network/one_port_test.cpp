@@ -137,3 +137,27 @@ TEST_CASE("a resistor fed by a current source alone, or by nothing, has no one-p
         "no finite resistance is seen between the nodes");
   CHECK_FALSE(network::thevenin_ohms(loose.network, node(2), node(0), dangling).ok());
 }
+
+TEST_CASE("the quotient of two voltages has a one-port form of its own") {
+  // 3.3 V over 3 kohm, 1 kohm and the resistor R: the tap above R over the node above the 1 kohm is R/(1k + R) (by
+  // hand).
+  Board board;
+  board.volts(1, 0, 3.3);
+  board.resistor(1, 2, 3e3);
+  board.resistor(2, 3, 1e3);
+  const auto sensor = board.resistor(3, 0, 1);
+  const auto over = network::one_port(board.network, sensor, node(3)).value();
+  const auto under = network::one_port(board.network, sensor, node(2)).value();
+  const auto form = network::quotient_form(over, under).value();
+  CHECK(form.open_volts == Approx(1).epsilon(1e-12));
+  CHECK(form.short_volts == Approx(0).margin(1e-12));
+  CHECK(form.source_ohms == Approx(1e3).epsilon(1e-12));
+  for (const double ohms : {1.0, 100.0, 5e3, 1e7})
+    CHECK(network::volts_at(form, ohms) == Approx(ohms / (1e3 + ohms)).epsilon(1e-12));
+}
+
+TEST_CASE("a quotient whose divisor passes zero has no form") {
+  CHECK_FALSE(network::quotient_form({3, 1, 1e3}, {2, -1, 1e3}).ok());
+  CHECK_FALSE(network::quotient_form({3, 1, 1e3}, {2, 0, 1e3}).ok());
+  CHECK_FALSE(network::quotient_form({3, 1, 1e3}, {0, 2, 1e3}).ok());
+}

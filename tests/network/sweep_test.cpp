@@ -131,3 +131,28 @@ TEST_CASE("a sweep says at which point it has no solution, and refuses too few v
   CHECK(network::sweep_volts(rails.board.network, meeting, 2, {}, {}).error() ==
         "at point 2 of the sweep a voltage source is shorted or works against another one");
 }
+
+TEST_CASE("a free resistor as a link and as an open circuit is what solving the network so gives") {
+  const Bench made = bench();
+  for (const auto branch : {made.upper, made.sensor, made.reference}) {
+    const network::Overrides nominal;
+    const auto free =
+        network::FreeBranch::make(made.board.network, branch, 10, 10e6, {}, {&nominal, 1}, made.watched).value();
+    for (const double ohms : {0.0, network_test::infinite}) {
+      const std::vector<model::Override> held{{branch, ohms}};
+      const auto volts = network::node_volts(made.board.network, held).value();
+      for (std::size_t w = 0; w < made.watched.size(); ++w)
+        CHECK(free.volts(0, w, ohms) == Approx(volts[made.watched[w].index()]).epsilon(1e-9).margin(1e-9));
+    }
+  }
+}
+
+TEST_CASE("a resistor that alone holds a node has no volts as an open circuit") {
+  Board board;
+  board.volts(1, 0, 3.3);
+  const auto only = board.resistor(1, 2, 1e3);
+  const network::Overrides nominal;
+  const std::vector<model::NodeId> watched{node(2)};
+  const auto free = network::FreeBranch::make(board.network, only, 1, 1e6, {}, {&nominal, 1}, watched).value();
+  CHECK(std::isnan(free.volts(0, 0, network_test::infinite)));
+}

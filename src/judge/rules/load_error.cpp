@@ -52,7 +52,7 @@ std::string remedy(model::LoadKind kind, const model::Figures& figures) {
     case model::LoadKind::input_resistance:
       return "less resistance in the arms and before the pin, or a buffer, lessens it";
     case model::LoadKind::rail_resistance:
-      return "a stiffer rail, less current out of it, or a range that ends on that rail lessens it";
+      return "a stiffer rail or less current out of it lessens it, and on one rail a divider and its range sag alike";
     case model::LoadKind::devices:
       return "less resistance in the arms and before the pin, or parts that conduct less within the range, lessens it";
     case model::LoadKind::part:

@@ -27,9 +27,12 @@ std::optional<double> crossing(const model::AuditedInput& input, const EndGap& e
   return std::nullopt;
 }
 
-std::string help_text(const model::AuditedInput& input, const EndGap& end) {
+std::string help_text(const InputContext& context, const EndGap& end) {
+  if (end.name == "low")
+    if (const std::string text = unliftable_text(context.input, end.point, context.unit); !text.empty())
+      return "; " + text;
   if (end.nominal_gap >= 0) return "; without leakage it stays on scale, so a smaller resistance at the pin would do";
-  const std::string reach = reach_text(input.figures);
+  const std::string reach = reach_text(context.input.figures);
   if (reach.empty()) return "; other arm values, less gain or a wider range would keep it on scale";
   return fmt::format("; {} of the range and stays on scale", reach);
 }
@@ -52,7 +55,7 @@ void run(const InputContext& context, Findings& out) {
                     end.name, texts.value, measurand_text(*finding.at, context.unit), texts.limit, tolerated.reason,
                     leaves ? fmt::format("it crosses the end at {}", measurand_text(*leaves, context.unit))
                            : std::string{"it is past the end over the whole sweep"},
-                    help_text(input, end));
+                    help_text(context, end));
     out.add(std::move(finding));
   }
 }

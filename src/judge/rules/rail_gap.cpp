@@ -7,11 +7,14 @@
 namespace judge::rules {
 namespace {
 
-std::string help_text(const model::Figures& figures, const EndGap& end, double limit) {
+std::string help_text(const InputContext& context, const EndGap& end, double limit) {
+  if (end.name == "low")
+    if (const std::string text = unliftable_text(context.input, end.point, context.unit); !text.empty())
+      return "; " + text;
   if (end.nominal_gap >= limit)
     return fmt::format("; without leakage it is {}, so a smaller resistance at the pin would do",
                        compared_percent(end.nominal_gap, end.gap).value);
-  const std::string reach = reach_text(figures);
+  const std::string reach = reach_text(context.input.figures);
   if (reach.empty()) return "; other arm values, less gain or a wider range would keep it off the end";
   return fmt::format("; {} of the range with both ends clear", reach);
 }
@@ -30,7 +33,7 @@ void run(const InputContext& context, Findings& out) {
     finding.at = input.sweep->at[end.point];
     finding.message = fmt::format("the gap to the {} end of the range is {} at {}, where {} is the least accepted{}",
                                   end.name, texts.value, measurand_text(*finding.at, context.unit), texts.limit,
-                                  help_text(input.figures, end, limit));
+                                  help_text(context, end, limit));
     out.add(std::move(finding));
   }
 }

@@ -14,6 +14,8 @@ bool beside_span_use(const model::Input& input, const model::Figures& figures) {
   return warned && !is_off(input.levels, model::RuleId::span_use);
 }
 
+// Against what one resistor reaches at a value of its own (advise::Offers::best): a part that would better be left out
+// is as often there on purpose, as a linearising resistor across a sensor is.
 void run(const InputContext& context, Findings& out) {
   const model::Figures& figures = context.input.figures;
   const model::Input& input = context.input.divider.input;

@@ -1,5 +1,7 @@
 #include <algorithm>
+#include <cmath>
 #include <fmt/format.h>
+#include <optional>
 
 #include "judge/rule.hpp"
 #include "judge/wording.hpp"
@@ -24,25 +26,61 @@ std::string swing_text(const model::AuditedInput& input, const std::string& unit
   return fmt::format("from {} to {}", end_text(low), end_text(high));
 }
 
-// What would help, as clauses that follow the sentence.
-std::string help_text(const model::AuditedInput& input, bool within_reach) {
-  const model::Figures& figures = input.figures;
-  const bool rail = is_rail(*input.sweep);
-  const std::string reach = reach_text(figures);
+// The most that the sensor allows over a full swing from one end of the range to the other, whatever the arms:
+// (sqrt k - 1)/(sqrt k + 1), k = Rmax/Rmin. Nothing where its resistance is not known.
+std::optional<double> sensor_ceiling(const model::Sweep& sweep) {
+  if (sweep.sensor_ohms.empty()) return std::nullopt;
+  const auto [least, most] = std::minmax_element(sweep.sensor_ohms.begin(), sweep.sensor_ohms.end());
+  if (!(*least > 0) || !std::isfinite(*most)) return std::nullopt;
+  const double root = std::sqrt(*most / *least);
+  return (root - 1) / (root + 1);
+}
+
+std::string offers_text(const model::Figures& figures) {
+  std::string text = reach_text(figures);
+  if (figures.other) text += (text.empty() ? "" : ", ") + offer_text(*figures.other);
+  return text;
+}
+
+// Within reach: how far, and which part gets there.
+std::string within_text(const model::Figures& figures, bool rail, double ceiling) {
+  const std::string offers = offers_text(figures);
+  const double named = std::max(figures.span_reachable.value_or(0), figures.other ? figures.other->span_use : 0.0);
   std::string text;
+  if (rail)
+    text = fmt::format("; {} is the most any divider reaches over this range of the rail", percent_text(ceiling));
+  else if (offers.empty() || percent_text(named) != percent_text(ceiling))
+    text = fmt::format("; {} can be reached with this sensor", percent_text(ceiling));
+  return offers.empty() ? text : text + "; " + offers;
+}
+
+// Out of reach of any one resistor: whether more of them would do, or none.
+std::string beyond_text(const model::AuditedInput& input, double ceiling, double limit) {
+  const std::string offers = offers_text(input.figures);
+  const std::string most = percent_text(ceiling);
+  if (is_rail(*input.sweep))
+    return fmt::format(
+        "; no divider reaches it: {} is the most over this range of the rail{}, so it takes a converter "
+        "range that begins nearer to the lowest reading",
+        most, offers.empty() ? "" : fmt::format(" ({})", offers));
+  std::string text = offers.empty()
+                         ? fmt::format("; {} is the most between the readings of an open and a shorted sensor", most)
+                         : fmt::format("; no value of a single resistor reaches it: {}", offers);
+  const auto sensor = sensor_ceiling(*input.sweep);
+  if (!sensor) return text;
+  if (*sensor < limit) return text + ", so it takes gain or a smaller reference";
+  return text + fmt::format("; the sensor itself allows {} of a full swing, so more than one value must change",
+                            percent_text(*sensor));
+}
+
+// What would help, as clauses that follow the sentence.
+std::string help_text(const model::AuditedInput& input, bool within_reach, double limit) {
+  const model::Figures& figures = input.figures;
   const auto ceiling = ceiling_of(figures);
-  if (!ceiling) return reach.empty() ? text : "; " + reach;
-  const std::string best = percent_text(*ceiling);
-  if (within_reach) {
-    text = rail ? fmt::format("; {} is the most any divider reaches over this range of the rail", best)
-                : fmt::format("; {} is the most any resistance reaches with this sensor", best);
-    return reach.empty() ? text : text + "; " + reach;
-  }
-  text = rail ? fmt::format("; no divider reaches it: {} is the most over this range of the rail", best)
-              : fmt::format("; no resistance reaches it: {} is the most with this sensor", best);
-  if (!reach.empty()) text += fmt::format(" ({})", reach);
-  return text + (rail ? ", so it takes a converter range that begins nearer to the lowest reading"
-                      : ", so it takes gain or a smaller reference");
+  if (ceiling)
+    return within_reach ? within_text(figures, is_rail(*input.sweep), *ceiling) : beyond_text(input, *ceiling, limit);
+  const std::string offers = offers_text(figures);
+  return offers.empty() ? offers : "; " + offers;
 }
 
 void run(const InputContext& context, Findings& out) {
@@ -58,7 +96,7 @@ void run(const InputContext& context, Findings& out) {
   finding.unit = "fraction";
   finding.message =
       fmt::format("the reading uses {} of the range, {}, where {} is the least accepted{}", texts.value,
-                  swing_text(context.input, context.unit), texts.limit, help_text(context.input, within_reach));
+                  swing_text(context.input, context.unit), texts.limit, help_text(context.input, within_reach, limit));
   out.add(std::move(finding));
 }
 
