@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <fmt/format.h>
 #include <map>
+#include <optional>
 #include <unordered_set>
 
 #include "base/overloaded.hpp"
@@ -36,19 +37,29 @@ void for_each_end(const Graph& graph, std::span<const Edge> edges, const Visit& 
       if (graph.pin_use(edge, i) == PinUse::conducts) visit(graph.pin(edge, i));
 }
 
-// Parts through which the far end leads on that are no way for a walk.
-std::string parts_beyond(const Graph& graph, const Surroundings& around, Node far, const Region& behind) {
-  std::unordered_set<Node> nodes{far};
-  for (const Edge edge : behind.edges)
+// Where a region leads on through a part that is no way for a walk.
+struct Beyond {
+  std::string net;
+  std::string part;
+};
+
+std::optional<Beyond> beyond(const Graph& graph, const Surroundings& around, const Region& region,
+                             const std::vector<Node>& also, const std::vector<Node>& walk) {
+  std::unordered_set<Node> nodes(also.begin(), also.end());
+  for (const Edge edge : region.edges)
     for (std::size_t i = 0; i < 2; ++i) nodes.insert(graph.pin(edge, i));
+  for (const Node node : walk) nodes.erase(node);
   for (const Edge edge : around.edges) {
     if (graph.feeds(edge)) continue;
     for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
-      if (graph.pin_use(edge, i) == PinUse::conducts && nodes.contains(graph.pin(edge, i)))
-        return base::printable_short(graph.name(edge));
+      if (const Node node = graph.pin(edge, i);
+          graph.pin_use(edge, i) == PinUse::conducts && nodes.contains(node) && graph.rails().at(node) == nullptr)
+        return Beyond{net_text(graph, node), base::printable_short(graph.name(edge))};
   }
-  return {};
+  return std::nullopt;
 }
+
+constexpr std::string_view what_arms_are = "this version takes resistances and sources for arms";
 
 }  // namespace
 
@@ -87,17 +98,25 @@ std::string dead_end(const Graph& graph, const Surroundings& around, const Senso
       std::any_of(behind.returns.begin(), behind.returns.end(), [&](Node node) { return node != walk.nodes.front(); });
   if (behind.reaches_rail() || returns) return {};
   const std::string name = base::printable_short(graph.board().sensors[sensor.sensor].name);
+  if (const auto on = beyond(graph, around, behind, {*walk.far_end}, walk.nodes))
+    return fmt::format("the far end of sensor {} leads to net {} and on through {} only; {}", name, on->net, on->part,
+                       what_arms_are);
   const std::string net = net_text(graph, *walk.far_end);
-  const std::string beyond = parts_beyond(graph, around, *walk.far_end, behind);
-  if (!beyond.empty())
-    return fmt::format(
-        "net {}, the far end of sensor {}, leads on through {} only; this version takes resistances and "
-        "sources for arms",
-        net, name, beyond);
   return fmt::format(
       "net {}, the far end of sensor {}, leads to no rail, so nothing flows through the sensor: if it is "
       "meant to be a rail, declare [rail.\"{}\"] volts",
       net, name, net);
+}
+
+std::string blocked_arm(const Graph& graph, const Surroundings& around, const Walk& walk) {
+  for (const auto& at_node : walk.off)
+    for (const OffWalk& off : at_node) {
+      if (off.whole.reaches_rail() || off.whole.reaches_sensor_far_end || !off.whole.returns.empty()) continue;
+      if (const auto on = beyond(graph, around, off.whole, {}, walk.nodes))
+        return fmt::format("{} leads to net {} and on through {} only; {}", base::printable_short(graph.name(off.edge)),
+                           on->net, on->part, what_arms_are);
+    }
+  return {};
 }
 
 }  // namespace divide

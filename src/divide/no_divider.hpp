@@ -24,4 +24,8 @@ namespace divide {
 [[nodiscard]] std::string dead_end(const Graph& graph, const Surroundings& around, const SensorEdge& sensor,
                                    const Walk& walk);
 
+// Which branch off the walk would be an arm, were the part known that it leads on through: a switched pull-up, a
+// buffered supply. Empty where there is none.
+[[nodiscard]] std::string blocked_arm(const Graph& graph, const Surroundings& around, const Walk& walk);
+
 }  // namespace divide

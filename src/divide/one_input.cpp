@@ -188,17 +188,14 @@ class OneInput {
   }
 
   void split() {
-    if (const std::string why = dead_end(graph_, around_, *edge_, *walk_); !why.empty()) {
-      refuse(why);
-      found_.sensor.reset();
-      return;
-    }
+    if (std::string why = dead_end(graph_, around_, *edge_, *walk_); !why.empty()) return leave(std::move(why));
     arms_ = arms_of_walk();
     const Sides sides = sort_sides(graph_, *edge_, *walk_, *arms_);
     const bool fed_by_current = std::any_of(arms_->edges.begin(), arms_->edges.end(), [this](Edge edge) {
       return std::holds_alternative<model::CurrentSource>(graph_.part(edge));
     });
     if (!edge_->is_rail && !fed_by_current && sides.upper_rail == sides.lower_rail) {
+      if (std::string why = blocked_arm(graph_, around_, *walk_); !why.empty()) return leave(std::move(why));
       found_.no_divider = sides.upper_rail == nullptr ? std::string("its arms lead to no rail")
                                                       : fmt::format("both its arms lead to one rail, {}",
                                                                     printable_short(sides.upper_rail->name));
@@ -209,6 +206,11 @@ class OneInput {
     name_parts(sides);
     found_.candidates = arms_->candidates;
     found_.tap = tap_net();
+  }
+
+  void leave(std::string why) {
+    refuse(std::move(why));
+    found_.sensor.reset();
   }
 
   [[nodiscard]] model::NetId tap_net() const {

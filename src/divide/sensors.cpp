@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <fmt/format.h>
+#include <set>
 
 #include "base/text.hpp"
 #include "divide/walk.hpp"
@@ -120,6 +121,24 @@ std::vector<Node> shortest_trail(const Graph& graph, const Surroundings& around,
   return best;
 }
 
+// The sensors that change anything, without asking each of the board's for it: most networks have one of thousands.
+std::set<std::size_t> sensors_here(const Graph& graph, const Surroundings& around) {
+  std::set<std::size_t> here;
+  bool has_expressions = false;
+  for (const Edge edge : around.edges) {
+    if (graph.is_extra(edge) && graph.extra(edge).sensor) here.insert(*graph.extra(edge).sensor);
+    has_expressions = has_expressions || expression_of(graph.part(edge)).valid();
+  }
+  for (const Rail* rail : rails_of(graph, around)) {
+    if (rail->sensor) here.insert(*rail->sensor);
+    has_expressions = has_expressions || rail->volts.residual.valid();
+  }
+  const auto& sensors = graph.board().sensors;
+  for (std::size_t i = 0; has_expressions && i < sensors.size(); ++i)
+    if (sensors[i].variable && !changes_by(graph, around, i).none()) here.insert(i);
+  return here;
+}
+
 bool is_plain(const Graph& graph, Edge edge) {
   return graph.is_way(edge) && graph.role(edge) != model::Role::load;
 }
@@ -142,8 +161,7 @@ Changes changes_by(const Graph& graph, const Surroundings& around, std::size_t s
 
 std::vector<Mover> movers_of(const Graph& graph, const Surroundings& around, Node pin) {
   std::vector<Mover> movers;
-  for (std::size_t i = 0; i < graph.board().sensors.size(); ++i) {
-    if (changes_by(graph, around, i).none()) continue;
+  for (const std::size_t i : sensors_here(graph, around)) {
     Mover mover{i, sensor_edge(graph, around, i), std::nullopt};
     if (mover.edge && !mover.edge->is_rail && mover.edge->plus == mover.edge->minus) mover.edge.reset();
     if (mover.edge) mover.walk = find_walk(graph, *mover.edge, pin);

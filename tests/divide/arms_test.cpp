@@ -180,9 +180,21 @@ TEST_CASE("a sensor whose far end leads on through a switch or transistor is not
                "M1 S G 0 0 NM\nR7 S T 10\n.model NM NMOS\n", "S1 S 0 G 0 SW\n.model SW SW(VT=1 RON=1)\n");
   const auto board = board_of(supply + "R1 VCC PIN 10k\nRT PIN S 10k\nV2 G 0 5\n" + part, declared);
   CHECK(board.only().not_audited ==
-        test::Texts{"net S, the far end of sensor RT, leads on through " + part.substr(0, 2) +
+        test::Texts{"the far end of sensor RT leads to net S and on through " + part.substr(0, 2) +
                     " only; this version takes resistances and sources for arms"});
   CHECK(board.only().no_divider.empty());
+}
+
+TEST_CASE("a pull-up that leads on through a part that is no arm is not audited, and the part is named") {
+  const auto board_with = [](const std::string& netlist) {
+    return board_of(supply + "RT PIN 0 10k\nR1 P PIN 10k\n" + netlist, declared);
+  };
+  const auto switched = board_with("M1 P G VCC VCC PM\nV2 G 0 0\n.model PM PMOS(VTO=-1)\n");
+  CHECK(switched.only().not_audited ==
+        test::Texts{"R1 leads to net P and on through M1 only; this version takes resistances and sources for arms"});
+  const auto buffered = board_with("R7 VCC Q 1k\nR8 Q 0 1k\nE1 P 0 Q 0 1\n");
+  CHECK(buffered.only().not_audited ==
+        test::Texts{"R1 leads to net P and on through E1 only; this version takes resistances and sources for arms"});
 }
 
 TEST_CASE("a light pull-up before a heavy attenuator is an arm: nothing else leads to a second rail") {
