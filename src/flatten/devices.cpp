@@ -60,7 +60,7 @@ Elements::Outcome Elements::device(const Frame& frame, const model::ElementCard&
   const UsableModel& usable = models_.use(frame, found);
   if (usable.why == UsableModel::Why::failed) {
     work_.blame(card.card, work_.place(card.card, card.reference),
-                fmt::format("model {} could not be read", work_.shown(wanted)), found.card->card);
+                fmt::format("model {} cannot be used", work_.shown(wanted)), found.card->card);
     return std::nullopt;
   }
   if (usable.why == UsableModel::Why::unsupported) return Unmodelled{Why::unsupported, wanted};

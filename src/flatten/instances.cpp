@@ -113,7 +113,7 @@ void Instances::instantiate(const Frame& caller, const model::ElementCard& card)
   if (!scope.valid()) return elements_.add_unmodelled(caller, card, {Why::missing_subcircuit, card.reference.name});
   if (const model::Scope& wanted = work_.netlist.scopes[scope.index()]; wanted.broken) {
     work_.blame(card.card, work_.place(card.card, card.reference),
-                fmt::format("subcircuit {} could not be read", work_.shown(card.reference.name)), wanted.card);
+                fmt::format("subcircuit {} cannot be used", work_.shown(card.reference.name)), wanted.card);
     return elements_.add_broken(caller, card);
   }
   if (!may_expand(caller, card, scope)) return;

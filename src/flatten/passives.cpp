@@ -70,6 +70,11 @@ Reading Elements::passive_value(const Frame& frame, const model::ElementCard& ca
   const PassiveKind& kind = kind_of(card.letter);
   const Letter letter = card.letter == 'r' ? Letter::resistor : Letter::other;
   const std::string_view key(&kind.letter, 1);
+  if (model.card != nullptr && model.card->broken) {
+    work_.blame(card.card, work_.place(card.card, card.reference),
+                fmt::format("model {} cannot be used", work_.shown(model.card->name)), model.card->card);
+    return Failed{};
+  }
   Reading reading = values_.read(frame, card.value, card.card, letter);
   const model::Assignment* own = parameter(card, key);
   if (own == nullptr) own = parameter(card, kind.full);
@@ -99,6 +104,7 @@ FoundModel Elements::passive_model(const Frame& frame, const model::ElementCard&
   if (!name.valid()) return {};
   const FoundModel found = work_.library.model(frame.scope, name);
   if (found.card == nullptr) return {};
+  if (found.card->broken) return found;
   const PassiveKind& kind = kind_of(card.letter);
   const std::string_view type = work_.names.text(found.card->type);
   const bool fits = base::same_name(type, std::string_view(&kind.letter, 1)) || base::same_name(type, kind.long_model);

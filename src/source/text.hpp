@@ -41,7 +41,7 @@ struct Position {
 };
 
 struct SourceText {
-  std::string name;                  // as given on the command line or in the including card
+  std::string name;                  // as given on the command line; of an included file from the netlist's folder on
   Bytes bytes;                       // the whole text, as read
   std::optional<Place> included_at;  // the card that asked for it
 };

@@ -158,6 +158,7 @@ TEST_CASE("what uses a broken model or subcircuit is broken too, whatever anothe
   d.model("DX", "D");
   d.netlist.scopes[0].models.push_back({d.names.intern("DX"), {}, d.card(), {}, true});
   d.part("D1", "a b", "DX");
+  d.element("R1", "a b", 1000.0, "DX");
   d.subcircuit("S", "p");
   d.ends();
   d.subcircuit("S", "p");
@@ -166,8 +167,9 @@ TEST_CASE("what uses a broken model or subcircuit is broken too, whatever anothe
   const auto used = d.part("X1", "a", "S").card;
   d.flatten();
   CHECK(d.unmodelled("D1").why == Why::broken_card);
+  CHECK(d.unmodelled("R1").why == Why::broken_card);
   CHECK(d.unmodelled("X1").why == Why::broken_card);
-  CHECK(d.netlist.faults.at(used).reason == "subcircuit S could not be read");
+  CHECK(d.netlist.faults.at(used).reason == "subcircuit S cannot be used");
 }
 
 TEST_CASE("a circuit that is cut at its limit says so") {

@@ -143,3 +143,21 @@ TEST_CASE("netlist scopes: conditional cards are told once and nothing up to .en
   CHECK(reading.said() == Said{"t.cir:2:1: error: conditional cards are not followed by this version: all cards from "
                                "here to .endif are not read"});
 }
+
+TEST_CASE(
+    "netlist scopes: a subcircuit or model that stands twice is an error where the texts differ, and a note else") {
+  const NetlistReading reading(
+      "title\n.subckt D a b\nR1 a b 10k\n.ends\n.model DX D(is=1e-14)\n.subckt d A  B ; again\nr1 a b\n+ 10K\n.ends\n"
+      ".subckt D a b\nR1 a b 20k\n.ends\n.model DX D(is=1e-3)\n.model DX D(is=1e-14)\n");
+  CHECK(reading.said() == Said{"t.cir:6:1: note: this definition stands twice with the same text; so it is with 1 more",
+                               "t.cir:10:1: error: subcircuit D stands twice and says something else at t.cir:2",
+                               "t.cir:13:1: error: model DX stands twice and says something else at t.cir:5"});
+  CHECK_FALSE(reading.netlist().scopes.at(2).broken);
+  CHECK(reading.netlist().scopes.at(3).broken);
+  CHECK(reading.top().models.at(1).broken);
+  CHECK_FALSE(reading.top().models.at(2).broken);
+}
+
+TEST_CASE("netlist scopes: a model of a subcircuit may have the name of another one outside") {
+  CHECK(NetlistReading("title\n.model DX D(is=1)\n.subckt S a\n.model DX D(is=2)\n.ends\n").said().empty());
+}

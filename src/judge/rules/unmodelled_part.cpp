@@ -16,6 +16,12 @@ const Unmodelled* unmodelled(const BoardView& board, model::ElementId id) {
   return element == nullptr ? nullptr : std::get_if<Unmodelled>(&element->part);
 }
 
+// Whether its card may name a model in place of a value.
+bool takes_model(const BoardView& board, model::ElementId id) {
+  const model::Element* element = element_of(board, id);
+  return element != nullptr && (element->letter == 'r' || element->letter == 'c' || element->letter == 'l');
+}
+
 // Why there is no model, as a clause after the part's name.
 std::string reason_text(const BoardView& board, model::ElementId id) {
   const Unmodelled* part = unmodelled(board, id);
@@ -25,15 +31,15 @@ std::string reason_text(const BoardView& board, model::ElementId id) {
       named ? fmt::format(" \"{}\"", base::printable_short(board.names->text(part->wanted))) : std::string{};
   switch (part->why) {
     case Unmodelled::Why::unknown_letter:
+    case Unmodelled::Why::unsupported:
       return named ? fmt::format("has no model here (it is{})", wanted) : "has no model here";
     case Unmodelled::Why::no_model:
       return fmt::format("has no model{} in the netlist", wanted);
     case Unmodelled::Why::missing_subcircuit:
       return fmt::format("has no subcircuit{} in the netlist", wanted);
-    case Unmodelled::Why::unsupported:
-      return fmt::format("is of a kind{} that is not modelled here", wanted);
     case Unmodelled::Why::no_value:
-      return named ? fmt::format("has no value: there is no model{}, and no number", wanted) : "has no value";
+      if (!named) return "has no value";
+      return fmt::format("has no value:{} is {}no number", wanted, takes_model(board, id) ? "no model here and " : "");
     case Unmodelled::Why::parameter_name:
       return fmt::format("has no value: the parameter{} stands without braces", wanted);
     case Unmodelled::Why::bad_value:

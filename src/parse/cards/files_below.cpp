@@ -1,6 +1,7 @@
 // Included files: only those below the root.
 #include <map>
 #include <memory>
+#include <system_error>
 #include <utility>
 
 #include "parse/netlist.hpp"
@@ -25,12 +26,30 @@ struct Folders {
   }
 };
 
+// The path as messages show it: from the folder of the netlist on, whichever file asks.
+std::string shown_path(const Folders& folders, const fs::path& path, source::Place asked) {
+  source::SourceId netlist = asked.source;
+  while (folders.sources[netlist].included_at) netlist = folders.sources[netlist].included_at->source;
+  std::error_code error;
+  const fs::path folder = fs::canonical(folders.folder(netlist), error);
+  const fs::path shown = error ? fs::path() : path.lexically_relative(folder);
+  return shown.empty() ? path.filename().string() : shown.generic_string();
+}
+
+// Where this machine keeps the file is nobody's business.
+std::string without_folders(std::string message, const std::string& path, const std::string& shown) {
+  for (auto at = message.find(path); at != std::string::npos; at = message.find(path, at + shown.size()))
+    message.replace(at, path.size(), shown);
+  return message;
+}
+
 base::Result<source::SourceId> fetch(Folders& folders, const std::string& wanted, source::Place asked) {
   const auto path = source::resolve_below(folders.root, folders.folder(asked.source), wanted);
   if (!path.ok()) return base::Error{path.error()};
   auto bytes = source::read_file(*path, folders.limits);
-  if (!bytes.ok()) return base::Error{bytes.error()};
-  const source::SourceId id = folders.sources.add({wanted, std::move(bytes).value(), asked});
+  std::string shown = shown_path(folders, *path, asked);
+  if (!bytes.ok()) return base::Error{without_folders(bytes.error(), path->string(), shown)};
+  const source::SourceId id = folders.sources.add({std::move(shown), std::move(bytes).value(), asked});
   folders.of[id] = path->parent_path();
   return id;
 }

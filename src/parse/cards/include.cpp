@@ -45,7 +45,6 @@ void CardsReader::include_file(Card& card, model::CardId id, std::size_t first, 
     if (auto whole = include_(all, asked); whole.ok()) wanted = whole;
   }
   if (!wanted.ok()) {
-    set_fate(id, model::CardFate::skipped);
     return say_missing(
         id, card.span(first, last - 1),
         fmt::format("cannot include \"{}\": {}", base::printable_short(all), base::printable(wanted.error())));
@@ -57,6 +56,7 @@ void CardsReader::include_file(Card& card, model::CardId id, std::size_t first, 
 }
 
 void CardsReader::say_missing(model::CardId id, source::Span where, std::string what) {
+  set_fate(id, model::CardFate::skipped);
   netlist_.missing_includes.push_back({id, where, what});
   say(base::Level::warning, id, where, std::move(what));
 }

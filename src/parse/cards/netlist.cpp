@@ -222,6 +222,7 @@ void CardsReader::read_root(source::SourceId root) {
   const auto line_end = static_cast<std::size_t>(title.data() - sources_[root].bytes.data()) + title.size();
   read_file(root, behind_line(sources_[root].bytes, line_end), {});
   close_scopes();
+  find_duplicates();
   read_later();
 }
 

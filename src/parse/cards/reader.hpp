@@ -99,6 +99,17 @@ class CardsReader {
   void close_scopes();
   void fail_control();
 
+  // duplicates.cpp
+  struct Defined {
+    base::NameId name;
+    model::CardId first;
+    model::CardId last;
+    bool broken = false;
+  };
+  void find_duplicates();
+  void compare(std::string_view what, const Defined& first, Defined& again);
+  [[nodiscard]] std::string text_of(model::CardId first, model::CardId last) const;
+
   // include.cpp
   void read_include(Card& card, model::CardId id);
   void read_library(Card& card, model::CardId id);
@@ -127,6 +138,8 @@ class CardsReader {
   std::size_t conditionals_ = 0;  // open .if
   model::CardId conditional_;     // the outermost of them
   bool nesting_told_ = false;
+  std::size_t same_ = 0;     // definitions that stand twice with the same text
+  model::CardId same_card_;  // the first of them
 };
 
 }  // namespace parse
