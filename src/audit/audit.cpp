@@ -122,10 +122,31 @@ void name_nets(const Reading& reading, const model::Divider& divider, model::Boa
   for (const model::NetId net : divider.nets) name(net);
 }
 
+// The card of an arm's part: an element or an instance; none for a label of the declarations.
+model::CardId card_of(const Reading& reading, const model::PartName& part) {
+  if (part.element.valid()) return reading.circuit.elements[part.element.index()].card;
+  for (const model::Instance& instance : reading.circuit.instances)
+    if (base::same_name(reading.names.text(instance.name), part.name)) return instance.card;
+  return {};
+}
+
+// Where a reader would begin to look: the sensor's own card, else that of the divider's first part.
+source::Span place_of(const Reading& reading, const model::Divider& divider) {
+  model::CardId first;
+  for (const auto* arm : {&divider.upper, &divider.lower}) {
+    for (const model::PartName& part : *arm) {
+      const model::CardId card = card_of(reading, part);
+      if (card.valid() && (!first.valid() || part.name == divider.sensor_name)) first = card;
+    }
+  }
+  return first.valid() ? reading.netlist.span(first) : source::Span{};
+}
+
 void take_inputs(const Reading& reading, model::Division& division, model::BoardReport& report) {
   for (auto& divider : division.dividers) {
     name_nets(reading, divider, report);
     model::AuditedInput input;
+    input.place = place_of(reading, divider);
     input.divider = std::move(divider);
     report.inputs.push_back(std::move(input));
   }

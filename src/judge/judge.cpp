@@ -94,7 +94,8 @@ void judge_input(model::AuditedInput& input, const model::SensorDeclaration* sen
   model::FindingList found;
   for (const Rule* rule : all_rules()) {
     if (rule->run_input == nullptr || (rule->stage == Stage::sweep && !swept)) continue;
-    Findings out(rule->id, input.divider.input.levels, input.divider.input.declared_at, found);
+    const source::Span where = input.place.valid() ? input.place : input.divider.input.declared_at;
+    Findings out(rule->id, input.divider.input.levels, where, found);
     rule->run_input(context, out);
   }
   input.findings.insert(input.findings.end(), std::make_move_iterator(found.begin()),

@@ -17,6 +17,7 @@ namespace model {
 
 struct AuditedInput {
   Divider divider;
+  source::Span place;    // the card that findings point to; none: where the input was declared
   bool audited = false;  // false: there is no result
   std::optional<Sweep> sweep;
   Figures figures;

@@ -67,3 +67,20 @@ TEST_CASE("a sensor that a ferrite shorts moves nothing, and that is the finding
   const auto run = board.audit();
   CHECK(rules(input(run, "A").findings) == "no-sensor");
 }
+
+TEST_CASE(
+    "findings of an input point to its sensor's card, else to the divider's first part, else to the declaration") {
+  const std::string two =
+      "title\nV1 VCC 0 3.3\nR1 VCC A 1meg\nRT A 0 10k\nR2 VCC B 1meg\nR3 B 0 10k\nC1 C 0 1n\n"
+      "R4 VCC D 1meg\nX1 D 0 BEAD\n.subckt BEAD a b\nR1 a b 10k\n.ends\n";
+  const auto run = Board(two, converter("\"A\", \"B\", \"C\", \"D\"") + ntc("RT") + ntc("X1")).audit();
+  const auto line = [&run](std::string_view name) {
+    const auto& finding = input(run, name).findings.front();
+    return run.report.sources[finding.where.begin.source].name.substr(run.report.netlist.size() - 9) + ':' +
+           std::to_string(run.report.sources.position(finding.where.begin).line);
+  };
+  CHECK(line("A") == "board.cir:4");
+  CHECK(line("B") == "board.cir:5");
+  CHECK(line("D") == "board.cir:9");
+  CHECK(input(run, "C").findings.front().where.begin.source != input(run, "A").findings.front().where.begin.source);
+}
