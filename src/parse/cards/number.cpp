@@ -6,6 +6,9 @@
 #include <cstdint>
 #include <system_error>
 
+#include "base/names.hpp"
+#include "parse/quantity/decimal.hpp"
+
 namespace parse {
 namespace {
 
@@ -42,38 +45,12 @@ Digits read_digits(std::string_view text) {
   return digits;
 }
 
-// The power of ten of a whole suffix; 99 for any other text.
+// The power of ten of a whole suffix; 99 for any other text, and for a bare M or F, which two readers take differently.
 int suffix_power(std::string_view suffix) {
   if (suffix.empty()) return 0;
-  if (suffix.size() == 3) {
-    const bool meg = (suffix[0] | 0x20) == 'm' && (suffix[1] | 0x20) == 'e' && (suffix[2] | 0x20) == 'g';
-    return meg ? 6 : 99;
-  }
-  if (suffix.size() != 1) return 99;
-  switch (suffix.front()) {
-    case 'k':
-    case 'K':
-      return 3;
-    case 'm':
-      return -3;
-    case 'u':
-    case 'U':
-      return -6;
-    case 'n':
-    case 'N':
-      return -9;
-    case 'p':
-    case 'P':
-      return -12;
-    case 'g':
-    case 'G':
-      return 9;
-    case 't':
-    case 'T':
-      return 12;
-    default:
-      return 99;
-  }
+  if (base::same_name(suffix, "meg")) return 6;
+  if (suffix.size() != 1 || std::string_view("kKmuUnNpPgGtT").find(suffix.front()) == std::string_view::npos) return 99;
+  return power_of_prefix(suffix);
 }
 
 // With an exponent: left to the standard library as long as all of the text is the number.

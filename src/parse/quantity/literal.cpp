@@ -8,7 +8,7 @@
 #include "base/text.hpp"
 #include "grammar/quantity.hpp"
 #include "parse/quantity.hpp"
-#include "parse/quantity/decimal.hpp"
+#include "parse/quantity/decimal_actions.hpp"
 
 namespace parse {
 namespace {
@@ -33,15 +33,8 @@ struct Parts {
 };
 
 template <class Rule>
-struct Note : pegtl::nothing<Rule> {};
+struct Note : NoteNumber<Rule> {};
 
-template <std::string_view Decimal::*field>
-struct KeepDigits {
-  template <class In>
-  static void apply(const In& in, Parts& parts) {
-    parts.decimal.*field = in.string_view();
-  }
-};
 template <std::string_view Parts::*field>
 struct KeepText {
   template <class In>
@@ -57,18 +50,6 @@ struct KeepToleranceLetter {
 };
 
 template <>
-struct Note<rules::whole> : KeepDigits<&Decimal::whole> {};
-template <>
-struct Note<rules::fraction> : KeepDigits<&Decimal::fraction> {};
-template <>
-struct Note<rules::marked_fraction> : KeepDigits<&Decimal::fraction> {};
-template <>
-struct Note<rules::lead_fraction> : KeepDigits<&Decimal::fraction> {};
-template <>
-struct Note<rules::exponent> : KeepDigits<&Decimal::exponent> {};
-template <>
-struct Note<rules::point_letter> : KeepText<&Parts::point> {};
-template <>
 struct Note<rules::scale> : KeepText<&Parts::scale> {};
 template <>
 struct Note<rules::coded_scale> : KeepText<&Parts::scale> {};
@@ -82,13 +63,6 @@ template <>
 struct Note<rules::common_tolerance_letter> : KeepToleranceLetter {};
 template <>
 struct Note<rules::mega_tolerance_letter> : KeepToleranceLetter {};
-template <>
-struct Note<rules::sign> {
-  template <class In>
-  static void apply(const In& in, Parts& parts) {
-    parts.decimal.negative = *in.begin() == '-';
-  }
-};
 template <>
 struct Note<rules::comma> {
   static void apply0(Parts& parts) { parts.comma = true; }

@@ -9,7 +9,7 @@
 
 #include "base/text.hpp"
 #include "grammar/quantity.hpp"
-#include "parse/quantity/decimal.hpp"
+#include "parse/quantity/decimal_actions.hpp"
 
 namespace parse {
 namespace {
@@ -24,42 +24,13 @@ struct Parts {
 };
 
 template <class Rule>
-struct Note : pegtl::nothing<Rule> {};
-
-template <std::string_view Decimal::*field>
-struct KeepDigits {
-  template <class In>
-  static void apply(const In& in, Parts& parts) {
-    parts.decimal.*field = in.string_view();
-  }
-};
-template <std::string_view Parts::*field>
-struct KeepText {
-  template <class In>
-  static void apply(const In& in, Parts& parts) {
-    parts.*field = in.string_view();
-  }
-};
+struct Note : NoteNumber<Rule> {};
 
 template <>
-struct Note<rules::whole> : KeepDigits<&Decimal::whole> {};
-template <>
-struct Note<rules::fraction> : KeepDigits<&Decimal::fraction> {};
-template <>
-struct Note<rules::marked_fraction> : KeepDigits<&Decimal::fraction> {};
-template <>
-struct Note<rules::lead_fraction> : KeepDigits<&Decimal::fraction> {};
-template <>
-struct Note<rules::exponent> : KeepDigits<&Decimal::exponent> {};
-template <>
-struct Note<rules::point_letter> : KeepText<&Parts::point> {};
-template <>
-struct Note<rules::unit_text> : KeepText<&Parts::unit> {};
-template <>
-struct Note<rules::sign> {
+struct Note<rules::unit_text> {
   template <class In>
   static void apply(const In& in, Parts& parts) {
-    parts.decimal.negative = *in.begin() == '-';
+    parts.unit = in.string_view();
   }
 };
 
