@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <fmt/format.h>
 #include <map>
+#include <set>
 #include <unordered_set>
 #include <utility>
 
@@ -48,6 +49,25 @@ std::vector<judge::BoardFacts::Unreadable> unreadable_cards(const Reading& readi
   return cards;
 }
 
+// Sources without a DC value that audited networks rest on.
+void add_time_zero(const Reading& reading, const model::Division& division, judge::BoardFacts& facts) {
+  std::set<model::ElementId> sources;
+  for (const auto& divider : division.dividers)
+    sources.insert(divider.at_time_zero.begin(), divider.at_time_zero.end());
+  for (const model::ElementId id : sources) {
+    const model::Element& source = reading.circuit.elements[id.index()];
+    const auto* const volts = std::get_if<model::VoltageSource>(&source.part);
+    const auto* const amperes = std::get_if<model::CurrentSource>(&source.part);
+    const model::Number value = volts != nullptr     ? volts->volts
+                                : amperes != nullptr ? amperes->amperes
+                                                     : model::Number{};
+    if (!value.fixed()) continue;
+    facts.assumptions.push_back(fmt::format("{} is taken at {}, where its signal begins: it has no DC value",
+                                            base::printable_short(reading.names.text(source.name)),
+                                            base::si_text(value.value, volts != nullptr ? "V" : "A")));
+  }
+}
+
 // The facts of a board that its own rules judge.
 judge::BoardFacts facts_of(const Reading& reading, const model::Division& division) {
   judge::BoardFacts facts;
@@ -57,6 +77,7 @@ judge::BoardFacts facts_of(const Reading& reading, const model::Division& divisi
   for (const auto& missing : reading.netlist.missing_includes)
     facts.missing_includes.push_back({missing.where, missing.what});
   for (const auto& assumption : division.assumptions) facts.assumptions.push_back(assumption.text);
+  add_time_zero(reading, division, facts);
   std::unordered_set<std::uint32_t> told;
   for (const auto& divider : division.dividers)
     for (const auto& suspect : divider.suspects) told.insert(suspect.element.value);

@@ -186,8 +186,9 @@ class Binder {
                                                    : circuit_.instances[bound.instance.index()].pin_count;
     take_ends(bound);
     if (pins == 2) return true;
-    error(declared.where, fmt::format("sensor \"{}\" has {} {}; a {} has two", printable_short(bound.name), pins,
-                                      pins == 1 ? "pin" : "pins", declared.kind.value));
+    error(declared.where,
+          fmt::format("sensor \"{}\" has {} {}; one of kind \"{}\" has two", printable_short(bound.name), pins,
+                      pins == 1 ? "pin" : "pins", declared.kind.value));
     return false;
   }
 

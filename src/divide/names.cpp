@@ -98,7 +98,8 @@ std::string_view NameIndex::text(model::InstanceId instance) const {
 
 std::string NameIndex::suggest_net(std::string_view wanted) const {
   std::vector<std::string_view> candidates;
-  for (std::uint32_t i = 0; i < circuit_.nets.size(); ++i) candidates.push_back(text(model::NetId{i}));
+  // Ground is there in every circuit: nobody meant it by another name.
+  for (std::uint32_t i = 1; i < circuit_.nets.size(); ++i) candidates.push_back(text(model::NetId{i}));
   return suggestion(wanted, candidates);
 }
 

@@ -84,6 +84,8 @@ class OneInput {
     }
     for (const auto& suspect : graph_.circuit().suspects)
       if (here.contains(suspect.element.value)) found_.suspects.push_back(suspect);
+    for (const model::ElementId source : graph_.circuit().at_time_zero)
+      if (here.contains(source.value)) found_.at_time_zero.push_back(source);
   }
 
   // Whether there is one sensor and a walk from it to the pin.

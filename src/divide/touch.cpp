@@ -54,15 +54,15 @@ std::vector<std::string> card_sentences(const std::set<model::CardId>& cards, co
   constexpr std::size_t most = 6;
   std::vector<std::string> sentences;
   std::set<model::CardId> causes;
-  std::size_t more = 0;
+  bool more = false;
   for (const model::CardId card : cards) {
     const auto own = netlist.faults.find(card);
     const model::CardFault fault = own == netlist.faults.end() ? model::CardFault{} : own->second;
     const bool taken = fault.reason.empty() && fault.cause.valid();
-    if (taken && !causes.insert(fault.cause).second) continue;
+    if (!causes.insert(taken ? fault.cause : card).second) continue;
     if (sentences.size() == most) {
-      ++more;
-      continue;
+      more = true;
+      break;
     }
     std::string text = fmt::format("the card at {} could not be read and names a net of its network",
                                    place_text(sources, netlist.span(card).begin));
@@ -75,7 +75,7 @@ std::vector<std::string> card_sentences(const std::set<model::CardId>& cards, co
     if (fault.cause.valid()) text += fmt::format(" ({})", place_text(sources, netlist.span(fault.cause).begin));
     sentences.push_back(std::move(text));
   }
-  if (more > 0) sentences.push_back(fmt::format("{} more cards of its network could not be read", more));
+  if (more) sentences.emplace_back("more cards of its network could not be read");
   return sentences;
 }
 
@@ -141,9 +141,13 @@ std::vector<model::CardId> BrokenCards::touching(const Graph& graph, const Surro
           wanted.insert(base::folded(names_.text(netlist.words[scope.ports.first + i].name)));
     }
   std::vector<model::CardId> found;
-  for (const Card& card : cards_)
-    if (std::any_of(wanted.begin(), wanted.end(), [&](const std::string& word) { return card.words.contains(word); }))
-      found.push_back(card.id);
+  constexpr std::size_t enough = 100;  // a junk file has as many broken cards as lines
+  for (const Card& card : cards_) {
+    const bool names_one = std::any_of(card.words.begin(), card.words.end(),
+                                       [&](const std::string& word) { return wanted.contains(word); });
+    if (names_one) found.push_back(card.id);
+    if (found.size() == enough) break;
+  }
   return found;
 }
 

@@ -29,7 +29,7 @@ class BrokenCards {
   BrokenCards(const model::Netlist& netlist, const source::Sources& sources, const base::NameTable& names);
 
   // The cards that name a net of the network, in order: the net by its own name, by its name inside its subcircuit, or
-  // by the port of an instance that is joined to it.
+  // by the port of an instance that is joined to it. A hundred are enough.
   [[nodiscard]] std::vector<model::CardId> touching(const Graph& graph, const Surroundings& around,
                                                     const model::Netlist& netlist) const;
 

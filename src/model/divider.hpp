@@ -115,6 +115,7 @@ struct Divider {
 
   std::vector<UnmodelledTouch> unmodelled;
   std::vector<SuspectValue> suspects;    // in the network
+  std::vector<ElementId> at_time_zero;   // sources in it or at its rails, as in Circuit::at_time_zero
   std::string no_divider;                // why there is none; empty where there is one
   bool no_sensor = false;                // nothing in the divider varies
   std::vector<std::string> not_audited;  // why no result can be had, in sentences

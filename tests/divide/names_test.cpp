@@ -141,3 +141,8 @@ TEST_CASE("a part of a name that says ground makes no net a ground") {
   CHECK_FALSE(divide::is_ground_name("X1.AGND"));
   CHECK_FALSE(divide::is_ground_name(""));
 }
+
+TEST_CASE("ground is never offered as the net that was meant") {
+  CHECK(test::board_of("", test::converter("\"A\"")).said ==
+        test::Texts{"tap.toml:4:11: error: converter \"ADC\": no net of the netlist is or fits \"A\""});
+}

@@ -73,10 +73,10 @@ TEST_CASE("an instance of an unknown subcircuit may be a sensor: it needs no mod
 
 TEST_CASE("a resistance sensor of three pins is refused at its place") {
   const auto element = board_of(top + "Q1 VCC A 0 QN\n.model QN NPN\n", input + ntc("Q1"));
-  CHECK(element.said == Texts{"tap.toml:5:9: error: sensor \"Q1\" has 3 pins; a ntc has two"});
+  CHECK(element.said == Texts{"tap.toml:5:9: error: sensor \"Q1\" has 3 pins; one of kind \"ntc\" has two"});
   const auto instance =
       board_of(top + "XP VCC A 0 POT\n.subckt POT A B C\nR1 A B 1k\nR2 B C 1k\n.ends\n", input + ntc("XP"));
-  CHECK(instance.said == Texts{"tap.toml:5:9: error: sensor \"XP\" has 3 pins; a ntc has two"});
+  CHECK(instance.said == Texts{"tap.toml:5:9: error: sensor \"XP\" has 3 pins; one of kind \"ntc\" has two"});
 }
 
 TEST_CASE("a sensor off the board hangs between two nets and is reported by its label") {

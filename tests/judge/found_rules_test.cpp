@@ -180,6 +180,15 @@ TEST_CASE("suspect-value: both readings are given, at the value itself") {
   CHECK(found[0].where.begin.offset == 9);
 }
 
+TEST_CASE("suspect-value: mega and milli are told apart by more than a letter's case") {
+  const fixtures::SmallBoard board;
+  auto input = sound_input();
+  input.divider.suspects = {{board.r1, board.literal, 1e6, 1e-3}};
+  const auto found = findings_of(RuleId::suspect_value, input, nullptr, board.view());
+  REQUIRE(found.size() == 1);
+  CHECK(found[0].message == "\"4k7\" of R1 is 1 megohm to the builder of the board, but SPICE reads 1 milliohm");
+}
+
 TEST_CASE("suspect-value: a value in which SPICE sees no number says so, on inputs without result too") {
   auto input = sound_input();
   input.audited = false;
@@ -243,4 +252,28 @@ TEST_CASE("no-sensor: of many parts five are named and the others counted") {
   CHECK(all_findings(input).at(0).message.find("(R1, R2, R3, R4, R5 and R6)") != std::string::npos);
   input.divider.lower = {{"R7", {}}};
   CHECK(all_findings(input).at(0).message.find("(R1, R2, R3, R4, R5 and 2 more)") != std::string::npos);
+}
+
+TEST_CASE(
+    "unmodelled-part: why there is no model is said with the word that the card has, and without one of letters") {
+  using Why = model::Unmodelled::Why;
+  const auto message = [](Why why, char letter) {
+    fixtures::SmallBoard board;
+    board.circuit.elements[board.u7.index()].letter = letter;
+    std::get<model::Unmodelled>(board.circuit.elements[board.u7.index()].part).why = why;
+    auto input = sound_input();
+    input.divider.unmodelled.resize(1);
+    input.divider.unmodelled[0] = {board.u7, board.tap, false};
+    const auto found = findings_of(RuleId::unmodelled_part, input, nullptr, board.view());
+    return found.empty() ? std::string() : found[0].message.substr(0, found[0].message.find(": what it draws"));
+  };
+  CHECK(message(Why::unknown_letter, 'u') == "X1.U7 touches TAP and has no model here (it is \"opamp\")");
+  CHECK(message(Why::unsupported, 'e') == "X1.U7 touches TAP and has no model here (it is \"opamp\")");
+  CHECK(message(Why::no_value, 'r') == "X1.U7 touches TAP and has no value: \"opamp\" is no model here and no number");
+  CHECK(message(Why::no_value, 'v') == "X1.U7 touches TAP and has no value: \"opamp\" is no number");
+  CHECK(message(Why::parameter_name, 'r') ==
+        "X1.U7 touches TAP and has no value: the parameter \"opamp\" stands without braces");
+  CHECK(message(Why::bad_value, 'r') == "X1.U7 touches TAP and has no value: \"opamp\" is no number");
+  // Its card's error is told at the card and as the reason why the input is not audited.
+  CHECK(message(Why::broken_card, 'r').empty());
 }

@@ -30,8 +30,24 @@ std::string_view unit_of(const model::Element* element) {
   }
 }
 
+// A unit as a word, to stand behind a prefix that is one.
+std::string_view word_of(std::string_view unit) {
+  if (unit == "F") return "farad";
+  if (unit == "H") return "henry";
+  if (unit == "V") return "volt";
+  if (unit == "A") return "ampere";
+  return unit;
+}
+
+// M and m are what such values are often about: here they are spelled out.
 std::string value_text(double value, std::string_view unit) {
-  return unit.empty() ? base::number_text(value) : base::si_text(value, unit);
+  if (unit.empty()) return base::number_text(value);
+  std::string text = base::si_text(value, unit);
+  const auto prefix = text.find(' ') + 1;
+  const bool prefixed = text.size() == prefix + 1 + unit.size();
+  if (!prefixed || (text[prefix] != 'M' && text[prefix] != 'm')) return text;
+  return text.replace(prefix, 1, text[prefix] == 'M' ? unit == "ohm" ? "meg" : "mega" : "milli")
+      .replace(text.size() - unit.size(), unit.size(), word_of(unit));
 }
 
 void run_input(const InputContext& context, Findings& out) {
