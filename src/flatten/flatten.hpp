@@ -26,7 +26,7 @@ struct Options {
 };
 
 // Expands the top level. Errors in a card (undefined parameter, unknown function, a value without a number, a name that
-// stands twice) are diagnostics at its place; the element is then Unmodelled{unsupported} with all its pins, so that
+// stands twice) are diagnostics at its place; the element is then Unmodelled{broken_card} with all its pins, so that
 // nothing it touches passes for checked, and its card's fate is error. Instances of an unknown subcircuit, devices of
 // an unknown model, and letters without a meaning become Unmodelled elements too; the fate of their cards is
 // unmodelled. A problem that many instances of a subcircuit share is one diagnostic, with their number and one of them.

@@ -150,11 +150,20 @@ Elements::Outcome Elements::reactance(const Frame& frame, const model::ElementCa
   const auto& quantity = std::get<Quantity>(reading);
   note_unused(card, model);
   suspect(quantity);
-  // At DC an inductor is its series resistance and a capacitor its leakage, where the card gives one.
-  const KeyOhms own = key_ohms(frame, card, card.letter == 'c' ? "rpar" : "rser");
+  // At DC an inductor is its series resistance and a capacitor what lies across it, where the card gives one. The
+  // latter is no part of a divider as firmware knows it, and must not pass for an arm.
+  const bool capacitor = card.letter == 'c';
+  const KeyOhms own = key_ohms(frame, card, capacitor ? "rpar" : "rser");
   if (own.failed) return std::nullopt;
+  if (capacitor && own.ohms) {
+    work_.fail(ProblemKind::value, card.card, work_.place(card.card, parameter(card, "rpar")->key), frame.instance,
+               fmt::format("the resistance across a capacitor ({}) is not followed by this version: write it as a "
+                           "resistor",
+                           work_.shown(card.name)));
+    return std::nullopt;
+  }
   if (own.ohms) return model::Resistor{*own.ohms};
-  if (card.letter == 'c') return model::Capacitor{quantity.number};
+  if (capacitor) return model::Capacitor{quantity.number};
   return model::Inductor{quantity.number};
 }
 
