@@ -44,7 +44,7 @@ void* take_memory(std::size_t bytes) {
 }
 
 void give_memory_back(void* memory, std::size_t bytes) noexcept {
-  if (!is_large(bytes)) return ::operator delete(memory, bytes);
+  if (!is_large(bytes)) return ::operator delete(memory);
   (void)::munmap(memory, in_whole_pages(bytes));
 }
 
