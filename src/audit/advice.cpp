@@ -2,6 +2,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <numeric>
+#include <vector>
 
 #include "advise/reach.hpp"
 #include "audit/load.hpp"
@@ -50,14 +52,25 @@ void add_reach(const model::Divider& divider, const Prepared& prepared, model::F
   figures.best_ohms = offers.best->ohms;
 }
 
-// Of a linear network the resistance at the pin is a ratio of linear functions of the sensor's, so its largest is at an
-// end.
+// Points of the sweep among which the resistance at the pin is largest. Of a linear network it is a ratio of linear
+// functions of each resistance, so that where one moves its largest is at an end; where several do it may be anywhere.
+std::vector<std::size_t> points_of_extremes(const Prepared& prepared) {
+  const auto& values = prepared.swept.front().values;
+  std::vector<std::size_t> points;
+  if (prepared.swept.size() == 1) {
+    const auto [low, high] = std::minmax_element(values.begin(), values.end());
+    for (const auto end : {low, high}) points.push_back(static_cast<std::size_t>(end - values.begin()));
+  } else {
+    points.resize(prepared.at.size());
+    std::iota(points.begin(), points.end(), std::size_t{0});
+  }
+  return points;
+}
+
 void add_source_ohms(const model::Divider& divider, const Prepared& prepared, model::Figures& figures) {
   if (!divider.whole.network.linear || prepared.swept.empty()) return;
-  const auto& values = prepared.swept.front().values;
-  const auto [low, high] = std::minmax_element(values.begin(), values.end());
-  for (const auto end : {low, high}) {
-    const auto held = at_point(prepared, static_cast<std::size_t>(end - values.begin()));
+  for (const std::size_t point : points_of_extremes(prepared)) {
+    const auto held = at_point(prepared, point);
     const auto ohms = network::thevenin_ohms(divider.whole.network, divider.whole.probe, model::ground_node, {}, held);
     if (!ohms.ok()) return figures.pin_source_ohms.reset();
     figures.pin_source_ohms = std::max(figures.pin_source_ohms.value_or(0), *ohms);

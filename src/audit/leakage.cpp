@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 #include <cstdint>
+#include <optional>
 #include <set>
 #include <utility>
 
@@ -57,11 +58,13 @@ class Corners {
 
   base::Result<std::vector<model::Condition>> run() {
     if (const auto done = solve(); !done.ok()) return base::Error{done.error()};
+    const auto highest = patterns(network::Wanted::largest);
+    const auto lowest = patterns(network::Wanted::smallest);
+    if (!highest || !lowest)
+      return base::Error{"within the declared leakages the ends of the converter's range may meet"};
     std::vector<model::Condition> conditions;
-    for (const Signs& signs : patterns(network::Wanted::largest))
-      conditions.push_back(condition(probed_, ConditionKind::leakage_high, signs));
-    for (const Signs& signs : patterns(network::Wanted::smallest))
-      conditions.push_back(condition(probed_, ConditionKind::leakage_low, signs));
+    for (const Signs& signs : *highest) conditions.push_back(condition(probed_, ConditionKind::leakage_high, signs));
+    for (const Signs& signs : *lowest) conditions.push_back(condition(probed_, ConditionKind::leakage_low, signs));
     return conditions;
   }
 
@@ -73,7 +76,7 @@ class Corners {
       if (i > 0) held.push_back({probed_.leakages[i - 1], probed_.leakage_amperes[i - 1]});
       const std::vector<model::NodeId> watched{probed_.probe, end(probed_.low), end(probed_.high)};
       const auto volts = network::sweep_volts(probed_.network, swept_, points_, held, watched);
-      if (!volts.ok()) return base::Error{volts.error()};
+      if (!volts.ok()) return base::Error{"its network has no closed solution: " + volts.error()};
       readings_.emplace_back();
       for (std::size_t p = 0; p < points_; ++p) readings_.back().push_back(quotient(*volts, p));
     }
@@ -88,7 +91,8 @@ class Corners {
     return {input_.gain * (volts[3 * p] - low), high - low};
   }
 
-  [[nodiscard]] std::set<Signs> patterns(network::Wanted wanted) const {
+  // Nothing where the range may be none.
+  [[nodiscard]] std::optional<std::set<Signs>> patterns(network::Wanted wanted) const {
     std::set<Signs> found;
     std::vector<network::Quotient> moves(probed_.leakages.size());
     Signs signs(moves.size());
@@ -96,7 +100,7 @@ class Corners {
       const network::Quotient base = readings_.front()[p];
       for (std::size_t i = 0; i < moves.size(); ++i)
         moves[i] = {readings_[i + 1][p].over - base.over, readings_[i + 1][p].under - base.under};
-      network::extreme(base, moves, wanted, signs);
+      if (std::isnan(network::extreme(base, moves, wanted, signs))) return std::nullopt;
       found.insert(signs);
     }
     return found;

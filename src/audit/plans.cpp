@@ -2,12 +2,14 @@
 
 #include <algorithm>
 #include <cmath>
+#include <fmt/format.h>
 #include <iterator>
 #include <string>
 #include <utility>
 
 #include "audit/leakage.hpp"
 #include "audit/slope.hpp"
+#include "base/text.hpp"
 #include "divide/sweep_values.hpp"
 #include "network/linear.hpp"
 #include "network/sweep.hpp"
@@ -39,7 +41,7 @@ base::Result<std::vector<model::Condition>> conditions_of(const model::Divider& 
   if (!among(needs, model::ConditionKind::leakage_high) && !among(needs, model::ConditionKind::leakage_low))
     return conditions;
   auto leaking = leakage_conditions(divider, swept, points);
-  if (!leaking.ok()) return base::Error{no_closed_solution + leaking.error()};
+  if (!leaking.ok()) return base::Error{leaking.error()};
   std::move(leaking->begin(), leaking->end(), std::back_inserter(conditions));
   return conditions;
 }
@@ -155,6 +157,22 @@ base::Result<judge::Solved> solved_of(const model::Divider& divider, const Prepa
   if (solved.sensor_ohms.empty() && divider.sensor_form)
     solved.sensor_ohms = effective_ohms(*divider.sensor_form, solved.bare.pin);
   return solved;
+}
+
+std::string turning_range(const judge::Solved& solved) {
+  if (solved.nominal.low.empty()) return {};
+  const double first = solved.nominal.high.front() - solved.nominal.low.front();
+  for (const auto* volts : {&solved.nominal, solved.leakage_high ? &*solved.leakage_high : nullptr,
+                            solved.leakage_low ? &*solved.leakage_low : nullptr}) {
+    for (std::size_t p = 0; volts != nullptr && p < volts->low.size(); ++p)
+      if (const double range = volts->high[p] - volts->low[p]; range * first < 0)
+        return fmt::format(
+            "the converter's range turns over within the sweep: its high end lies {} V {} the low one at {:g}, "
+            "and {} V {} it at {:g}",
+            base::number_text(std::fabs(first), 4), first < 0 ? "below" : "above", solved.at.front(),
+            base::number_text(std::fabs(range), 4), range < 0 ? "below" : "above", solved.at[p]);
+  }
+  return {};
 }
 
 void settle_range(model::Divider& divider, const judge::Solved& solved) {

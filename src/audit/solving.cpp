@@ -1,6 +1,7 @@
 #include "audit/solving.hpp"
 
 #include <optional>
+#include <string>
 #include <utility>
 #include <vector>
 
@@ -75,6 +76,7 @@ class Solving {
     auto solved = solved_of(input.divider, job.prepared, plans_[job.whole_plan], *job.whole->solution,
                             job.bare ? &*job.bare->solution : nullptr);
     if (!solved.ok()) return fail(input, solved.error());
+    if (std::string why = turning_range(*solved); !why.empty()) return fail(input, std::move(why));
     settle_range(input.divider, *solved);
     const sensor::Kind* kind = sensor::find_kind(sensor_of(input.divider)->kind.value);
     input.sweep = judge::curve_of(input.divider.input, *solved, std::string(kind->measurand), std::string(kind->unit));

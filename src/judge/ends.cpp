@@ -23,7 +23,9 @@ Tolerated tolerated_excess(const model::Input& input) {
   const double offset_reading = offset.in_lsb ? reading_of_lsb(input, offset.value)
                                               : input.gain * offset.value / (input.nominal_high - input.nominal_low);
   Tolerated most{reading_of_lsb(input, 0.5), "half an LSB"};
-  if (std::fabs(offset_reading) > most.fraction) most = {std::fabs(offset_reading), "the converter's offset error"};
+  // An offset that cannot be held against the range excuses nothing.
+  if (std::isfinite(offset_reading) && std::fabs(offset_reading) > most.fraction)
+    most = {std::fabs(offset_reading), "the converter's offset error"};
   const double limit = limit_of(input, model::RuleId::off_scale);
   if (limit > most.fraction) most = {limit, "the declared limit"};
   return most;

@@ -3,13 +3,15 @@
 #include <algorithm>
 #include <cmath>
 #include <fmt/format.h>
+#include <variant>
 
 #include "base/text.hpp"
 
 namespace judge {
 
 std::string percent_text(double fraction, int digits) {
-  return fmt::format("{} %", base::number_text(100 * fraction, digits));
+  constexpr double rounding = 1e-12;
+  return fmt::format("{} %", base::number_text(std::fabs(fraction) < rounding ? 0 : 100 * fraction, digits));
 }
 
 std::string measurand_text(double value, std::string_view unit) {
@@ -66,7 +68,8 @@ std::string unliftable_text(const model::AuditedInput& input, std::size_t point,
   const bool rail = input.sweep->sensor_ohms.empty();
   const bool to_ground = divider.upper_rail == "0" || divider.lower_rail == "0";
   const double volts = input.sweep->at[point];
-  if (!rail || !to_ground || volts < 0 || !(volts <= divider.input.nominal_low)) return {};
+  const bool stands = std::holds_alternative<double>(divider.input.low);
+  if (!rail || !to_ground || !stands || volts < 0 || !(volts <= divider.input.nominal_low)) return {};
   return fmt::format(
       "no divider lifts {} off it; judge the rail over the range in which it is used, or begin the "
       "converter's range lower",

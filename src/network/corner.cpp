@@ -2,6 +2,7 @@
 
 #include <cassert>
 #include <cmath>
+#include <limits>
 
 namespace network {
 namespace {
@@ -19,6 +20,9 @@ double extreme(Quotient base, std::span<const Quotient> moves, Wanted wanted, st
   const double direction = (wanted == Wanted::largest) == (base.under > 0) ? 1 : -1;
   const signed char idle = wanted == Wanted::largest ? 1 : -1;
   for (auto& sign : signs) sign = 0;
+  double divisor_moves = 0;
+  for (const Quotient& move : moves) divisor_moves += std::abs(move.under);
+  if (!(divisor_moves < std::abs(base.under))) return std::numeric_limits<double>::quiet_NaN();
   double quotient = base.over / base.under;
   for (int round = 0; round < most_rounds; ++round) {
     bool changed = false;

@@ -15,7 +15,7 @@ enum class Wanted : unsigned char { largest, smallest };
 
 // The largest or smallest of
 //   (base.over + sum of s_i moves[i].over) / (base.under + sum of s_i moves[i].under),   each s_i = +1 or -1,
-// and its signs in `signs` (as many as there are moves). The divisor must not change its sign within the box. A move
+// and its signs in `signs` (as many as there are moves). NaN where the divisor may be zero within the box. A move
 // without effect on the quotient has the sign +1 in the largest and -1 in the smallest. Method: linear-fractional
 // programming by Dinkelbach's iteration (Management Science 13, 1967): with the quotient q at hand, each sign is that
 // of over - q under; it ends when no sign changes.

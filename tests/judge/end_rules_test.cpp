@@ -207,6 +207,14 @@ TEST_CASE("off-scale: on a range that runs downwards the high end is the one of 
   CHECK(found[0].message.find("it crosses the end at 14 V") != std::string::npos);
 }
 
+TEST_CASE("off-scale: an offset that cannot be held against the range excuses nothing") {
+  auto input = reading({0.3, 0.5, 1});
+  input.figures.gap_high = -0.5;
+  input.divider.input.offset_error = {0.001, false};
+  input.divider.input.nominal_high = input.divider.input.nominal_low;
+  CHECK(findings_of(RuleId::off_scale, input).size() == 1);
+}
+
 TEST_CASE("off-scale: an offset in volts at the pin counts for as many LSB more as the gain says") {
   auto input = reading({0.3, 0.5, 1});
   input.divider.input.gain = 4;

@@ -222,3 +222,21 @@ TEST_CASE("span-efficiency: what leaving a part out would reach does not count")
   input.figures.other = model::Offer{"R8", std::numeric_limits<double>::infinity(), 0.9};
   CHECK(findings_of(RuleId::span_efficiency, input).empty());
 }
+
+TEST_CASE("span-use: a reading that stands still is told as that, and no value is offered") {
+  auto input = poor_span();
+  set_reach(input, 1e-16, 1e-16);
+  input.figures.span_use = 1e-16;
+  for (double& volts : input.sweep->pin_volts) volts = 1.65;
+  auto found = findings_of(RuleId::span_use, input);
+  REQUIRE(found.size() == 1);
+  CHECK(found[0].level == Level::warning);
+  CHECK(found[0].message.rfind("the reading stays at 50 % from ", 0) == 0);
+  CHECK(
+      found[0].message.ends_with(", so nothing can be read from it; what the sensor moves does not reach the reading"));
+  input.sweep->sensor_ohms.clear();
+  input.divider.input.high = model::NetId{3};
+  CHECK(findings_of(RuleId::span_use, input)
+            .at(0)
+            .message.ends_with("the converter's range follows the rail: it takes a range that stands still"));
+}

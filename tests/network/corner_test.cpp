@@ -60,3 +60,12 @@ TEST_CASE("A source without effect goes with the side that is asked for") {
   extreme({2, 2}, moves, Wanted::smallest, signs);
   CHECK(signs == std::array<signed char, 2>{-1, -1});
 }
+
+TEST_CASE("Where the divisor may be zero within the box there is no extreme") {
+  const std::array<Quotient, 2> moves{Quotient{0, 0.6}, Quotient{0, 0.4}};
+  std::array<signed char, 2> signs{};
+  CHECK(std::isnan(extreme({1, 1}, moves, Wanted::largest, signs)));
+  CHECK(std::isnan(extreme({1, -0.9}, moves, Wanted::smallest, signs)));
+  CHECK(std::isnan(extreme({1, 0}, {}, Wanted::largest, {})));
+  CHECK(extreme({1, 1.5}, moves, Wanted::largest, signs) == Approx(2).epsilon(1e-12));
+}

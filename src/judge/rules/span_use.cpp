@@ -2,6 +2,7 @@
 #include <cmath>
 #include <fmt/format.h>
 #include <optional>
+#include <variant>
 
 #include "judge/rule.hpp"
 #include "judge/wording.hpp"
@@ -83,10 +84,37 @@ std::string help_text(const model::AuditedInput& input, bool within_reach, doubl
   return offers.empty() ? offers : "; " + offers;
 }
 
+// Whether the reading itself does not move; one that is past an end all the time uses nothing either, but moves.
+bool stands_still(const model::AuditedInput& input) {
+  const auto [low, high] = std::minmax_element(input.sweep->pin_volts.begin(), input.sweep->pin_volts.end());
+  return std::fabs(input.divider.input.reading_of(*high) - input.divider.input.reading_of(*low)) < 1e-9;
+}
+
+// A reading that stands still is no matter of arm values.
+std::string standstill_text(const InputContext& context) {
+  const model::Input& input = context.input.divider.input;
+  const model::Sweep& sweep = *context.input.sweep;
+  const bool follows = is_rail(sweep) && (std::holds_alternative<model::NetId>(input.low) ||
+                                          std::holds_alternative<model::NetId>(input.high));
+  return fmt::format("the reading stays at {} from {} to {}, so nothing can be read from it; {}",
+                     percent_text(input.reading_of(sweep.pin_volts.front())),
+                     measurand_text(sweep.at.front(), context.unit), measurand_text(sweep.at.back(), context.unit),
+                     follows ? "the converter's range follows the rail: it takes a range that stands still"
+                             : "what the sensor moves does not reach the reading");
+}
+
 void run(const InputContext& context, Findings& out) {
   const model::Figures& figures = context.input.figures;
   const double limit = limit_of(context.input.divider.input, model::RuleId::span_use);
   if (!figures.span_use || *figures.span_use >= limit) return;
+  if (stands_still(context.input)) {
+    model::Finding finding = out.blank();
+    finding.value = figures.span_use;
+    finding.limit = limit;
+    finding.unit = "fraction";
+    finding.message = standstill_text(context);
+    return out.add(std::move(finding));
+  }
   const bool within_reach = ceiling_of(figures).value_or(limit) >= limit;
   const Compared texts = compared_percent(*figures.span_use, limit);
   model::Finding finding = out.blank();
