@@ -134,7 +134,8 @@ class Inputs {
     return net;
   }
 
-  // An end that is a rail has its nominal volts now; one inside a network gets them when that is solved.
+  // An end that is a rail has its nominal volts now; one inside a network, or a rail that a parameter moves, gets them
+  // when that is solved.
   void bind_end(const model::Declared<model::RangeEnd>& end, model::BoundEnd& bound, double& nominal) {
     std::visit(base::overloaded{[&](double volts) { bound = nominal = volts; },
                                 [&](const std::string& net) {
@@ -142,7 +143,8 @@ class Inputs {
                                   if (!id.valid()) return;
                                   bound = id;
                                   nominal = std::numeric_limits<double>::quiet_NaN();
-                                  if (const Rail* rail = rails_.at(nodes_.of(id)))
+                                  const Rail* rail = rails_.at(nodes_.of(id));
+                                  if (rail != nullptr && rail->volts.fixed())
                                     nominal = rail->has_volts ? rail->volts.value : rail->highest_volts;
                                 }},
                end.value);

@@ -7,6 +7,7 @@
 
 #include "base/text.hpp"
 #include "divide/leaves.hpp"
+#include "expression/evaluate.hpp"
 
 namespace divide {
 namespace {
@@ -31,7 +32,7 @@ class Finder {
     declared_ = found_.rails.size();
     follow_sources();
     for (Rail& rail : found_.rails)
-      if (!rail.sensor) rail.highest_volts = rail.volts.value;
+      if (!rail.sensor) rail.highest_volts = rail.volts.fixed() ? rail.volts.value : highest(rail.volts.residual);
     return std::move(found_);
   }
 
@@ -87,6 +88,26 @@ class Finder {
     const double from = declared.from ? declared.from->value : 0;
     const double to = declared.to ? declared.to->value : 0;
     rail.highest_volts = std::fabs(from) > std::fabs(to) ? from : to;
+  }
+
+  // Of an expression at both ends of its parameters' sweeps, the volts that are farther from 0.
+  [[nodiscard]] double highest(model::ExpressionId tree) const {
+    double most = 0;
+    for (const bool at_end : {false, true}) {
+      expression::Leaves leaves;
+      leaves.variable = [&](std::uint32_t variable) {
+        for (const BoundSensor& bound : board_.sensors) {
+          const auto& declared = sheet_.sensors[bound.declaration];
+          const auto& end = at_end ? declared.to : declared.from;
+          if (bound.variable == variable && end) return end->value;
+        }
+        return 0.0;
+      };
+      const auto value = expression::evaluate(circuit_.expressions, tree, leaves);
+      if (const double* volts = std::get_if<double>(&value); volts != nullptr && std::fabs(*volts) > std::fabs(most))
+        most = *volts;
+    }
+    return most;
   }
 
   // The sources whose current something follows.

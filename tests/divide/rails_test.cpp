@@ -1,4 +1,6 @@
 // Rails: nodes held at a known voltage, by a declaration or by a source.
+#include <cmath>
+
 #include <catch2/catch.hpp>
 
 #include "tests/divide/division.hpp"
@@ -120,6 +122,23 @@ TEST_CASE("one node declared twice with the same volts is one rail") {
       board_of("L1 VIN VCC 1u\n" + half, half_declared + "[rail.VIN]\nvolts = 3.3\n[rail.VCC]\nvolts = 3.3\n");
   CHECK(board.said.empty());
   CHECK(middle(board) == Approx(1.65).epsilon(1e-12));
+}
+
+TEST_CASE(
+    "a rail that a parameter sets has no nominal volts before it is solved, and stands on its side by its sweep") {
+  const auto board = board_of(".param x=2\nV1 V 0 5\nV2 REF 0 {x}\nR1 V A 10k\nRB A 0 {x*5k}\n",
+                              "[converter.ADC]\nbits = 12\nhigh = \"REF\"\ninputs = [\"A\"]\n[sensor.RB]\nkind = "
+                              "\"parameter\"\nsweep = \"x\"\nfrom = 1\nto = 3\n");
+  CHECK(std::isnan(board.only().input.nominal_high));
+  CHECK(board.only().whole.high.valid());
+}
+
+TEST_CASE("a rail whose source is an expression is the upper one by its volts over the sweep") {
+  const auto board = board_of(".param x=3.3\nV1 V 0 {x}\nR1 V A 10k\nR2 A 0 10k\n",
+                              "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"A\"]\n[sensor.V1]\nkind = "
+                              "\"parameter\"\nsweep = \"x\"\nfrom = 3\nto = 3.6\n");
+  CHECK(drawn(board, board.only()) == "V > R1 > A > R2 > 0");
+  CHECK(board.pin_volts(board.only(), 3)[2] == Approx(1.8).epsilon(1e-12));
 }
 
 TEST_CASE("a net named like a ground is taken for ground, and the assumption is said") {
