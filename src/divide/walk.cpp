@@ -127,22 +127,23 @@ class Walker {
       if (!taken.insert(edge).second) continue;
       region.edges.push_back(edge);
       const Node next = graph_.other_end(edge, from);
-      if (note_bound(next, region) || !seen.insert(next).second) continue;
+      if (note_bound(next, node, region) || !seen.insert(next).second) continue;
       push_all(next);
     }
     return region;
   }
 
-  // Whether a node ends a region; says so there.
-  bool note_bound(Node node, Region& region) const {
-    if (is_rail(node))
+  // Whether a node ends a region; says so there. What comes back to where it began leads nowhere.
+  bool note_bound(Node node, Node begin, Region& region) const {
+    if (is_rail(node)) {
       region.rails.push_back(node);
-    else if (on_walk_.contains(node))
-      region.returns.push_back(node);
-    else if (walk_.far_end && node == *walk_.far_end)
+    } else if (on_walk_.contains(node)) {
+      if (node != begin) region.returns.push_back(node);
+    } else if (walk_.far_end && node == *walk_.far_end) {
       region.reaches_sensor_far_end = true;
-    else
+    } else {
       return false;
+    }
     return true;
   }
 
