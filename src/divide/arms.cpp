@@ -85,11 +85,18 @@ class Chooser {
     if (candidates.size() == 1) candidates.front().arm = true;
     if (candidates.size() < 2) return;
     double heaviest = 0;
+    std::vector<double> weights;
     for (std::size_t i = 0; i < candidates.size(); ++i) {
-      candidates[i].weight_volts = weigh_(places_[i].edges());
-      heaviest = std::max(heaviest, candidates[i].weight_volts);
+      const Weight weight = weigh_(places_[i].edges(), walk_.nodes[places_[i].node]);
+      candidates[i].weight_volts = weight.pin_volts;
+      candidates[i].of_swing = weight.swing_volts > 0 ? weight.pin_volts / weight.swing_volts : 0;
+      weights.push_back(weight.node_volts);
+      heaviest = std::max(heaviest, weight.node_volts);
     }
-    for (auto& candidate : candidates) candidate.arm = candidate.weight_volts >= share_ * heaviest;
+    for (std::size_t i = 0; i < candidates.size(); ++i) {
+      candidates[i].arm = weights[i] >= share_ * heaviest;
+      candidates[i].share = heaviest > 0 && weights[i] < heaviest ? weights[i] / heaviest : 1;
+    }
   }
 
   // A role on any part of a branch is the branch's.
@@ -123,7 +130,7 @@ class Chooser {
     for (std::size_t i = 0; i < places_.size(); ++i) {
       model::TapCandidate& candidate = arms_.candidates[i];
       if (candidate.arm || candidate.declared || !adds_rail(places_[i], rails)) continue;
-      if (best == nullptr || candidate.weight_volts > best->weight_volts) best = &candidate;
+      if (best == nullptr || candidate.share > best->share) best = &candidate;
     }
     if (best != nullptr) best->arm = best->only_way = true;
   }

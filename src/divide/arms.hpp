@@ -13,8 +13,14 @@
 
 namespace divide {
 
-// How far the pin moves, at most over the sweep, when these edges are taken out; infinite where it then floats.
-using Weigh = std::function<double(std::span<const Edge> removed)>;
+// How far pin and node move, at most over the sweep, when these edges are taken out at a node; infinite where something
+// then floats.
+struct Weight {
+  double pin_volts = 0;
+  double node_volts = 0;
+  double swing_volts = 0;  // of the pin over the sweep, with the edges
+};
+using Weigh = std::function<Weight(std::span<const Edge> removed, Node at)>;
 
 struct Arms {
   std::size_t tap = 0;                          // index in Walk::nodes
@@ -23,8 +29,9 @@ struct Arms {
   std::vector<model::TapCandidate> candidates;  // from the sensor to the pin
 };
 
-// A candidate is an arm from `share` of the heaviest one's weight on, or where no other leads to a second rail;
-// declared roles win over weights. More than one candidate is weighed.
+// A candidate is an arm from `share` of the heaviest one's weight on, each weighed at its own node (an attenuator
+// behind it would make light of it at the pin), or where no other leads to a second rail; declared roles win over
+// weights. More than one candidate is weighed.
 [[nodiscard]] Arms choose_arms(const Graph& graph, const SensorEdge& sensor, const Walk& walk, double share,
                                const Weigh& weigh);
 

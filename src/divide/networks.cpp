@@ -18,14 +18,12 @@ BranchId push(model::Network& network, model::Branch branch) {
   return BranchId{static_cast<std::uint32_t>(network.branches.size() - 1)};
 }
 
-// Which branches the sensor moves.
-std::vector<model::SweptBranch> swept_branches(const Subject& subject, const Built& built) {
+// Which branches a sensor moves.
+std::vector<model::SweptBranch> swept_branches(const Graph& graph, const Built& built, std::size_t sensor) {
   std::vector<model::SweptBranch> swept;
-  if (subject.sensor == nullptr) return swept;
-  const Graph& graph = subject.graph;
-  const BoundSensor& bound = graph.board().sensors[subject.sensor->sensor];
+  const BoundSensor& bound = graph.board().sensors[sensor];
   for (const auto& [edge, branch] : built.edges) {
-    if (graph.is_extra(edge) && graph.extra(edge).sensor == subject.sensor->sensor)
+    if (graph.is_extra(edge) && graph.extra(edge).sensor == sensor)
       swept.push_back({branch, model::SweptQuantity::ohms, graph.name(edge)});
     else if (bound.variable &&
              depends_on(graph.circuit().expressions, expression_of(graph.part(edge)), *bound.variable))
@@ -33,12 +31,26 @@ std::vector<model::SweptBranch> swept_branches(const Subject& subject, const Bui
   }
   for (const auto& [index, branch] : built.rails) {
     const Rail& rail = graph.rails().rails[index];
-    if (rail.sensor == subject.sensor->sensor)
+    if (rail.sensor == sensor)
       swept.push_back({branch, model::SweptQuantity::volts, {}});
     else if (bound.variable && depends_on(graph.circuit().expressions, rail.volts.residual, *bound.variable))
       swept.push_back({branch, model::SweptQuantity::value, {}});
   }
   return swept;
+}
+
+// As build(), with the sensors that stand still at their values.
+Built build_held(const Subject& subject, std::span<const Edge> edges, std::span<const Node> nodes, bool ideal_rails) {
+  Built built = build(subject.graph, edges, nodes, ideal_rails);
+  for (const Held& held : subject.held) {
+    model::ProbedNetwork probed;
+    probed.swept = swept_branches(subject.graph, built, held.sensor);
+    probed.network = std::move(built.network);
+    // What has no value there stays without one, and no solve accepts that.
+    (void)hold(probed, subject.graph.circuit(), *held.declaration, held.at);
+    built.network = std::move(probed.network);
+  }
+  return built;
 }
 
 // Whether an end of the converter's range moves with the network: then it is probed like the pin.
@@ -101,7 +113,7 @@ model::ProbedNetwork finish(const Subject& subject, Built& built, Node probe) {
   out.probe = built.node(probe);
   probe_ends(subject, built, out);
   note_sensor(subject, built, out);
-  out.swept = swept_branches(subject, built);
+  if (subject.sensor != nullptr) out.swept = swept_branches(subject.graph, built, subject.sensor->sensor);
   out.network = std::move(built.network);
   return out;
 }
@@ -119,16 +131,17 @@ struct Plain {
   model::Network network;
   BranchId sensor;
   model::NodeId probe;
+  model::NodeId other;
 };
 
-Plain plain_network(const Subject& subject, std::span<const Edge> edges, Node probe, bool ideal_rails) {
+Plain plain_network(const Subject& subject, std::span<const Edge> edges, Node probe, bool ideal_rails, Node other) {
   std::vector<Edge> others;
   const auto& own = subject.sensor->edges;
   std::copy_if(edges.begin(), edges.end(), std::back_inserter(others),
                [&](Edge edge) { return std::find(own.begin(), own.end(), edge) == own.end(); });
-  const std::vector<Node> nodes{probe, subject.sensor->plus, subject.sensor->minus};
-  Built built = build(subject.graph, others, nodes, ideal_rails);
-  Plain plain{std::move(built.network), {}, built.node(probe)};
+  const std::vector<Node> nodes{probe, subject.sensor->plus, subject.sensor->minus, other};
+  Built built = build_held(subject, others, nodes, ideal_rails);
+  Plain plain{std::move(built.network), {}, built.node(probe), built.node(other)};
   const model::NodeId plus = built.node(subject.sensor->plus);
   const model::NodeId minus = built.node(subject.sensor->minus);
   plain.sensor =
@@ -149,24 +162,33 @@ std::vector<double> sample_ohms(const Subject& subject, const model::SensorDecla
   return values.ok() ? values->front().values : decades;
 }
 
-// Pin volts with a resistance for a sensor, at each sample; empty where some have no solution.
-std::vector<double> pin_volts(const Subject& subject, std::span<const Edge> edges, std::span<const double> ohms,
-                              double at) {
-  Plain plain = plain_network(subject, edges, subject.graph.nodes().of(subject.input.net), false);
-  std::vector<double> volts;
+// Volts of two nodes at each sample; empty where some have no solution.
+struct Volts {
+  std::vector<double> pin;
+  std::vector<double> node;
+};
+
+// With a resistance for a sensor.
+Volts sensor_volts(const Subject& subject, std::span<const Edge> edges, Node node, std::span<const double> ohms,
+                   double at) {
+  Plain plain = plain_network(subject, edges, subject.graph.nodes().of(subject.input.net), false, node);
+  Volts volts;
   if (!freeze(plain.network, subject.graph.circuit(), at)) return volts;
   for (const double value : ohms) {
     const model::Override held{plain.sensor, value};
     const auto solved = network::node_volts(plain.network, {&held, 1});
     if (!solved.ok()) return {};
-    volts.push_back((*solved)[plain.probe.index()]);
+    volts.pin.push_back((*solved)[plain.probe.index()]);
+    volts.node.push_back((*solved)[plain.other.index()]);
   }
   return volts;
 }
 
-// Pin volts of a monitor: the swept rail at rest moves the pin in proportion, so its highest volts tell the weights.
-std::vector<double> monitor_volts(const Subject& subject, std::span<const Edge> edges, double at) {
-  Built built = build(subject.graph, edges, wanted_nodes(subject), false);
+// Of a monitor: the swept rail moves the nodes in proportion, so its highest volts tell the weights.
+Volts monitor_volts(const Subject& subject, std::span<const Edge> edges, Node node, double at) {
+  std::vector<Node> nodes = wanted_nodes(subject);
+  nodes.push_back(node);
+  Built built = build_held(subject, edges, nodes, false);
   if (!freeze(built.network, subject.graph.circuit(), at)) return {};
   std::vector<model::Override> held;
   for (const auto& [index, branch] : built.rails) {
@@ -175,7 +197,8 @@ std::vector<double> monitor_volts(const Subject& subject, std::span<const Edge> 
   }
   const auto solved = network::node_volts(built.network, held);
   if (!solved.ok()) return {};
-  return {(*solved)[built.node(subject.graph.nodes().of(subject.input.net)).index()]};
+  const auto volts = [&](Node at_node) { return (*solved)[built.node(at_node).index()]; };
+  return {{volts(subject.graph.nodes().of(subject.input.net))}, {volts(node)}};
 }
 
 std::vector<Edge> without(std::span<const Edge> edges, std::span<const Edge> removed) {
@@ -183,6 +206,19 @@ std::vector<Edge> without(std::span<const Edge> edges, std::span<const Edge> rem
   std::copy_if(edges.begin(), edges.end(), std::back_inserter(left),
                [&](Edge edge) { return std::find(removed.begin(), removed.end(), edge) == removed.end(); });
   return left;
+}
+
+double swing(const std::vector<double>& volts) {
+  if (volts.empty()) return 0;
+  const auto [lowest, highest] = std::minmax_element(volts.begin(), volts.end());
+  return *highest - *lowest;
+}
+
+double farthest(const std::vector<double>& from, const std::vector<double>& to) {
+  if (from.size() != to.size()) return std::numeric_limits<double>::infinity();
+  double most = 0;
+  for (std::size_t i = 0; i < from.size(); ++i) most = std::max(most, std::fabs(to[i] - from[i]));
+  return most;
 }
 
 // Whether something tells a node's voltage where only these edges are left: one that nothing touches would float.
@@ -211,7 +247,7 @@ bool has_third_end(const Subject& subject) {
 model::ProbedNetwork whole_network(const Subject& subject) {
   std::vector<Node> nodes = wanted_nodes(subject);
   if (subject.sensor != nullptr) nodes.push_back(subject.sensor->plus), nodes.push_back(subject.sensor->minus);
-  Built built = build(subject.graph, subject.around.edges, nodes, false);
+  Built built = build_held(subject, subject.around.edges, nodes, false);
   model::ProbedNetwork out = finish(subject, built, subject.graph.nodes().of(subject.input.net));
   add_inputs(subject, built, out);
   return out;
@@ -225,13 +261,13 @@ model::ProbedNetwork bare_network(const Subject& subject, std::span<const Edge> 
     if (must_probe(subject.graph, *end) &&
         is_held(subject.graph, edges, subject.graph.nodes().of(std::get<model::NetId>(*end))))
       nodes.push_back(subject.graph.nodes().of(std::get<model::NetId>(*end)));
-  Built built = build(subject.graph, edges, nodes, true);
+  Built built = build_held(subject, edges, nodes, true);
   return finish(subject, built, tap);
 }
 
 std::optional<model::OnePort> sensor_form(const Subject& subject, std::span<const Edge> arms, Node tap) {
   if (subject.sensor == nullptr || subject.sensor->is_rail || has_third_end(subject)) return std::nullopt;
-  const Plain plain = plain_network(subject, arms, tap, true);
+  const Plain plain = plain_network(subject, arms, tap, true, tap);
   const bool fixed = std::none_of(plain.network.branches.begin(), plain.network.branches.end(),
                                   [](const model::Branch& branch) { return expression_of(branch.part).valid(); });
   if (!plain.network.linear || !fixed) return std::nullopt;
@@ -243,16 +279,17 @@ Weigh weigher(const Subject& subject, const model::SensorDeclaration& declaratio
   const bool monitor = subject.sensor->is_rail;
   const std::vector<double> ohms = monitor ? std::vector<double>{} : sample_ohms(subject, declaration);
   const double end = declaration.to ? declaration.to->value : 0;
-  const auto solve = [subject, monitor, ohms, end](std::span<const Edge> edges) {
-    return monitor ? monitor_volts(subject, edges, end) : pin_volts(subject, edges, ohms, end);
+  const auto solve = [subject, monitor, ohms, end](std::span<const Edge> edges, Node node) {
+    return monitor ? monitor_volts(subject, edges, node, end) : sensor_volts(subject, edges, node, ohms, end);
   };
-  const std::vector<double> all = solve(subject.around.edges);
-  return [subject, solve, all](std::span<const Edge> removed) {
-    const std::vector<double> left = solve(without(subject.around.edges, removed));
-    if (left.size() != all.size()) return std::numeric_limits<double>::infinity();
-    double most = 0;
-    for (std::size_t i = 0; i < all.size(); ++i) most = std::max(most, std::fabs(left[i] - all[i]));
-    return most;
+  return [subject, solve](std::span<const Edge> removed, Node node) {
+    const Volts all = solve(subject.around.edges, node);
+    const Volts left = solve(without(subject.around.edges, removed), node);
+    Weight weight;
+    weight.swing_volts = swing(all.pin);
+    weight.pin_volts = farthest(all.pin, left.pin);
+    weight.node_volts = farthest(all.node, left.node);
+    return weight;
   };
 }
 

@@ -14,13 +14,21 @@
 
 namespace divide {
 
+// A sensor that stands still at one measurand, because the reading does not care where it stands.
+struct Held {
+  std::size_t sensor = 0;  // in Board::sensors
+  const model::SensorDeclaration* declaration = nullptr;
+  double at = 0;
+};
+
 // What is solved, for which input, moved by which sensor.
 struct Subject {
   const Graph& graph;
   const std::vector<model::Input>& inputs;  // all of the board
   const model::Input& input;
   const Surroundings& around;
-  const SensorEdge* sensor;  // null: nothing varies
+  const SensorEdge* sensor;      // null: nothing varies
+  std::span<const Held> held{};  // other sensors
 };
 
 // The whole network, the pin as probe: every edge of the surroundings, rails with their resistances, every input's
@@ -36,7 +44,8 @@ struct Subject {
 // resistance.
 [[nodiscard]] std::optional<model::OnePort> sensor_form(const Subject& subject, std::span<const Edge> arms, Node tap);
 
-// Weighs edges of the surroundings for choose_arms(): the pin's largest movement at seven points of the sweep.
+// Weighs edges of the surroundings for choose_arms(), at seven points of the sweep (of a monitor at the end where it
+// stands highest).
 [[nodiscard]] Weigh weigher(const Subject& subject, const model::SensorDeclaration& declaration);
 
 }  // namespace divide

@@ -44,13 +44,13 @@ struct Beyond {
 };
 
 std::optional<Beyond> beyond(const Graph& graph, const Surroundings& around, const Region& region,
-                             const std::vector<Node>& also, const std::vector<Node>& walk) {
+                             const std::vector<Node>& also, const std::vector<Node>& walk, bool sources_alone = false) {
   std::unordered_set<Node> nodes(also.begin(), also.end());
   for (const Edge edge : region.edges)
     for (std::size_t i = 0; i < 2; ++i) nodes.insert(graph.pin(edge, i));
   for (const Node node : walk) nodes.erase(node);
   for (const Edge edge : around.edges) {
-    if (graph.feeds(edge)) continue;
+    if (graph.feeds(edge) || (sources_alone && !is_followed(graph, {&edge, 1}))) continue;
     for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
       if (const Node node = graph.pin(edge, i);
           graph.pin_use(edge, i) == PinUse::conducts && nodes.contains(node) && graph.rails().at(node) == nullptr)
@@ -59,7 +59,7 @@ std::optional<Beyond> beyond(const Graph& graph, const Surroundings& around, con
   return std::nullopt;
 }
 
-constexpr std::string_view what_arms_are = "this version takes resistances and sources for arms";
+constexpr std::string_view what_arms_are = "this version takes resistances, rails and current sources for arms";
 
 }  // namespace
 
@@ -70,6 +70,14 @@ bool is_driven(const Graph& graph, std::span<const Edge> edges) {
     driven = driven || (rail != nullptr && (!rail->has_volts || rail->sensor || !is_zero(rail->volts)));
   });
   return driven;
+}
+
+bool is_followed(const Graph& graph, std::span<const Edge> edges) {
+  return std::any_of(edges.begin(), edges.end(), [&](const Edge edge) {
+    const model::Part& part = graph.part(edge);
+    return std::holds_alternative<model::VoltageControlled>(part) ||
+           std::holds_alternative<model::CurrentControlled>(part) || std::holds_alternative<model::Behavioural>(part);
+  });
 }
 
 std::string missing_rail(const Graph& graph, std::span<const Edge> edges, Node pin) {
@@ -109,13 +117,16 @@ std::string dead_end(const Graph& graph, const Surroundings& around, const Senso
 }
 
 std::string blocked_arm(const Graph& graph, const Surroundings& around, const Walk& walk) {
-  for (const auto& at_node : walk.off)
-    for (const OffWalk& off : at_node) {
-      if (off.whole.reaches_rail() || off.whole.reaches_sensor_far_end || !off.whole.returns.empty()) continue;
-      if (const auto on = beyond(graph, around, off.whole, {}, walk.nodes))
-        return fmt::format("{} leads to net {} and on through {} only; {}", base::printable_short(graph.name(off.edge)),
-                           on->net, on->part, what_arms_are);
-    }
+  for (const bool dead_end_alone : {true, false})
+    for (const auto& at_node : walk.off)
+      for (const OffWalk& off : at_node) {
+        const bool leads_on =
+            off.whole.reaches_rail() || off.whole.reaches_sensor_far_end || !off.whole.returns.empty();
+        if (dead_end_alone && leads_on) continue;
+        if (const auto on = beyond(graph, around, off.whole, {}, walk.nodes, !dead_end_alone))
+          return fmt::format("{} leads to net {} and on through {}{}; {}", base::printable_short(graph.name(off.edge)),
+                             on->net, on->part, leads_on ? "" : " only", what_arms_are);
+      }
   return {};
 }
 

@@ -14,6 +14,9 @@ namespace divide {
 // Whether anything among these edges holds a voltage other than 0 or drives a current.
 [[nodiscard]] bool is_driven(const Graph& graph, std::span<const Edge> edges);
 
+// Whether a controlled or behavioural source among these edges holds or feeds what it is in.
+[[nodiscard]] bool is_followed(const Graph& graph, std::span<const Edge> edges);
+
 // "; net +3V3 is no rail: if it is meant to be one, declare [rail."+3V3"] volts": the net that these edges lead to and
 // that looks as if it were meant to be a rail, a dead end or else one where at least three parts meet. Empty where
 // there is none.

@@ -3,14 +3,15 @@
 #include <algorithm>
 #include <fmt/format.h>
 #include <fmt/ranges.h>
+#include <numeric>
 #include <set>
 #include <unordered_set>
 
 #include "base/text.hpp"
 #include "divide/arms.hpp"
+#include "divide/influence.hpp"
 #include "divide/networks.hpp"
 #include "divide/no_divider.hpp"
-#include "divide/ratiometric.hpp"
 #include "divide/sensors.hpp"
 #include "divide/walk.hpp"
 #include "model/finding.hpp"
@@ -28,7 +29,7 @@ class OneInput {
   }
 
   model::Divider run() {
-    if (const Rail* rail = graph_.rails().ideal_at(pin_)) {
+    if (const Rail* rail = graph_.rails().at(pin_)) {
       found_.no_divider = fmt::format("it is tied to rail {}", printable_short(rail->name));
       return std::move(found_);
     }
@@ -38,7 +39,7 @@ class OneInput {
       for (const model::NetId net : graph_.nodes().nets(node)) found_.nets.push_back(net);
     note_obstacles();
     const bool has_rail = reaches_rail();
-    if (!has_rail)
+    if (!has_rail && !is_followed(graph_, drawing_))
       found_.no_divider = "no resistive way leads from it to a rail" + missing_rail(graph_, drawing_, pin_);
     else if (!is_driven(graph_, drawing_))
       found_.no_divider = "its network reaches no rail but 0" + missing_rail(graph_, drawing_, pin_);
@@ -91,7 +92,11 @@ class OneInput {
   // Whether there is one sensor and a walk from it to the pin.
   bool choose_sensor() {
     auto movers = movers_of(graph_, around_, pin_);
-    drop_cancelling(movers);
+    drop_still(movers);
+    if (movers.empty() && !reaches_rail()) {
+      found_.no_divider = "no resistive way leads from it to a rail, and nothing declared moves what drives it";
+      return false;
+    }
     found_.no_sensor = movers.empty();
     if (movers.empty()) return false;
     if (movers.size() > 1) return refuse_several(movers), false;
@@ -105,37 +110,76 @@ class OneInput {
     return true;
   }
 
-  [[nodiscard]] const Rail* rail_swept_by(const Mover& mover) const {
-    const auto& rails = graph_.rails().rails;
-    const auto at =
-        std::find_if(rails.begin(), rails.end(), [&](const Rail& rail) { return rail.sensor == mover.sensor; });
-    return at == rails.end() ? nullptr : &*at;
+  // Sensors that change the network and leave the reading alone stand still while the one that moves it is swept.
+  void drop_still(std::vector<Mover>& movers) {
+    constexpr std::size_t most_tried_alone = 16;
+    if (movers.empty() || (movers.size() == 1 && movers.front().walk)) return;
+    const auto influence = Influence::make(subject(), request_.sheet, movers);
+    if (!influence) return;
+    for (std::size_t own = 0; own < movers.size(); ++own)
+      if (movers[own].walk && hold_all_but(own, *influence, movers)) return;
+    std::vector<std::size_t> all(movers.size());
+    std::iota(all.begin(), all.end(), std::size_t{0});
+    const bool walked = std::any_of(movers.begin(), movers.end(), [](const Mover& mover) { return mover.walk; });
+    if (!walked && influence->stand_still(all)) return movers.clear();
+    if (movers.size() > most_tried_alone) return;
+    std::vector<Mover> moving;  // for the sentence that names them
+    for (std::size_t i = 0; i < movers.size(); ++i)
+      if (!influence->stand_still({&i, 1})) moving.push_back(movers[i]);
+    if (moving.size() > 1 || (moving.size() == 1 && !moving.front().walk)) movers = std::move(moving);
   }
 
-  // A resistance on a rail that a monitor sweeps and that is the range too reads the same wherever the rail stands.
-  void drop_cancelling(std::vector<Mover>& movers) {
-    if (movers.size() != 2) return;
-    for (std::size_t i : {std::size_t{0}, std::size_t{1}}) {
-      const Rail* rail = rail_swept_by(movers[i]);
-      if (rail == nullptr) continue;
-      const auto& sweep = request_.sheet.sensors[graph_.board().sensors[movers[i].sensor].declaration];
-      const auto share = leakage_share(graph_, around_, found_.input, *rail, sweep);
-      if (!share) continue;
-      leakage_share_ = *share;
-      movers.erase(movers.begin() + static_cast<std::ptrdiff_t>(i));
-      return;
+  // Whether all the others leave the reading alone; then they stand still, and `own` is the only mover.
+  bool hold_all_but(std::size_t own, const Influence& influence, std::vector<Mover>& movers) {
+    std::vector<std::size_t> others;
+    for (std::size_t i = 0; i < movers.size(); ++i)
+      if (i != own) others.push_back(i);
+    if (!influence.stand_still(others)) return false;
+    auto share = influence.leakage_share(own, others);
+    if (!share) return false;
+    leakage_share_ = std::move(*share);
+    found_.leakage_where = leakage_share_.where;
+    for (const std::size_t other : others) {
+      found_.held.push_back(influence.held_text(other));
+      if (const auto held = influence.held(other)) held_.push_back(*held);
     }
+    movers = {Mover(movers[own])};
+    return true;
+  }
+
+  // Sensors by the way in which they move the input, "" for those with a way of their own.
+  [[nodiscard]] std::vector<std::pair<std::string, std::vector<std::string>>> by_way(
+      const std::vector<Mover>& movers) const {
+    std::vector<std::pair<std::string, std::vector<std::string>>> ways;
+    for (const Mover& mover : movers) {
+      const std::string way = way_of(mover);
+      auto at = std::find_if(ways.begin(), ways.end(), [&](const auto& entry) { return entry.first == way; });
+      if (at == ways.end()) at = ways.insert(ways.end(), {way, {}});
+      at->second.push_back(printable_short(graph_.board().sensors[mover.sensor].name));
+    }
+    return ways;
+  }
+
+  [[nodiscard]] std::string way_of(const Mover& mover) const {
+    if (!mover.walk) return way_in(graph_, around_, pin_, mover.sensor);
+    const bool by_parameter = mover.edge->is_rail && graph_.board().sensors[mover.sensor].variable;
+    return by_parameter ? fmt::format(" through rail {}", printable_short(graph_.rails().at(mover.edge->plus)->name))
+                        : std::string{};
   }
 
   void refuse_several(const std::vector<Mover>& movers) {
-    std::vector<std::string> names;
-    for (const Mover& mover : movers)
-      names.push_back(printable_short(graph_.board().sensors[mover.sensor].name) +
-                      (mover.walk ? std::string{} : way_in(graph_, around_, pin_, mover.sensor)));
+    constexpr std::size_t most = 5;  // named of each way
+    std::vector<std::string> texts;
+    for (auto& [way, names] : by_way(movers)) {
+      const std::size_t more = names.size() > most ? names.size() - most : 0;
+      names.resize(names.size() - more);
+      texts.push_back(fmt::format("{}{}{}", fmt::join(names, ", "),
+                                  more > 0 ? fmt::format(" and {} more", more) : std::string{}, way));
+    }
     refuse(
-        fmt::format("{} sensors move it ({}); this version sweeps one: leave out the [sensor.NAME] of those that may "
-                    "stand still at the netlist's values",
-                    movers.size(), fmt::join(names, ", ")));
+        fmt::format("{} sensors move it ({}); this version sweeps one: leave out the [sensor.NAME] of those that "
+                    "may stand still at the netlist's values, or declare them for a run of their own (--with)",
+                    movers.size(), fmt::join(texts, "; ")));
   }
 
   void refuse_unwalked(const Mover& mover) {
@@ -156,7 +200,7 @@ class OneInput {
   }
 
   [[nodiscard]] Subject subject() const {
-    return {graph_, request_.inputs, found_.input, around_, edge_ ? &*edge_ : nullptr};
+    return {graph_, request_.inputs, found_.input, around_, edge_ ? &*edge_ : nullptr, held_};
   }
 
   [[nodiscard]] Arms arms_of_walk() const {
@@ -168,7 +212,7 @@ class OneInput {
                                                                                                                  : 0U;
     const Weigh weigh = candidates > 1
                             ? weigher(subject(), found_.no_sensor ? model::SensorDeclaration{} : declaration())
-                            : [](std::span<const Edge>) { return 0.0; };
+                            : [](std::span<const Edge>, Node) { return Weight{}; };
     return choose_arms(graph_, *edge_, *walk_, ambiguous_share(), weigh);
   }
 
@@ -205,9 +249,26 @@ class OneInput {
       found_.sensor.reset();
       return;
     }
+    if (std::string why = end_on_the_way(); !why.empty()) return leave(std::move(why));
     name_parts(sides);
     found_.candidates = arms_->candidates;
     found_.tap = tap_net();
+  }
+
+  // The bare divider has no sense path, and so no such node.
+  [[nodiscard]] std::string end_on_the_way() const {
+    for (const model::BoundEnd* end : {&found_.input.low, &found_.input.high}) {
+      const auto* net = std::get_if<model::NetId>(end);
+      if (net == nullptr) continue;
+      const auto& nodes = walk_->nodes;
+      const auto after_tap = nodes.begin() + static_cast<std::ptrdiff_t>(arms_->tap) + 1;
+      if (std::find(after_tap, nodes.end(), graph_.nodes().of(*net)) != nodes.end())
+        return fmt::format(
+            "net {}, an end of its range, lies between tap and pin: what the divider reads cannot be "
+            "told there",
+            printable_short(graph_.names().text(*net)));
+    }
+    return {};
   }
 
   void leave(std::string why) {
@@ -279,7 +340,8 @@ class OneInput {
     if (!solved) return;
     if (!check_rails()) return;
     found_.whole = whole_network(whole);
-    for (double& amperes : found_.whole.leakage_amperes) amperes *= leakage_share_;
+    for (std::size_t k = 0; k < leakage_share_.of_each.size(); ++k)
+      found_.whole.leakage_amperes[k] *= leakage_share_.of_each[k];
     const Node tap = walk_->nodes[arms_->tap];
     found_.bare = bare_network(whole, arms_->edges, tap);
     found_.sensor_form = sensor_form(whole, arms_->edges, tap);
@@ -306,7 +368,8 @@ class OneInput {
   std::optional<SensorEdge> edge_;
   std::optional<Walk> walk_;
   std::optional<Arms> arms_;
-  double leakage_share_ = 1;  // as in ratiometric.hpp
+  std::vector<Held> held_;
+  LeakageShare leakage_share_;
 };
 
 }  // namespace

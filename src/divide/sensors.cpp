@@ -189,8 +189,13 @@ std::string way_in(const Graph& graph, const Surroundings& around, Node pin, std
     if (graph.rails().at(node) != nullptr && changes.rails != std::vector{node})
       return fmt::format(" through rail {}", rail_name(node));
   }
+  const auto here = [&](Edge edge) {
+    for (std::size_t i = 0; i < graph.pin_count(edge); ++i)
+      if (!trail.empty() && graph.pin(edge, i) == trail.front()) return true;
+    return false;
+  };
   for (const Edge edge : changes.edges)
-    if (!is_plain(graph, edge) || graph.board().sensors[sensor].variable)
+    if (here(edge) && (!is_plain(graph, edge) || graph.board().sensors[sensor].variable))
       return fmt::format(" through {}", base::printable_short(graph.name(edge)));
   return {};
 }

@@ -79,6 +79,18 @@ model::Number* number_of(model::Part& part) {
 
 }  // namespace
 
+bool hold(model::ProbedNetwork& probed, const model::Circuit& circuit, const model::SensorDeclaration& sensor,
+          double at) {
+  const auto values = swept_values(probed, circuit, sensor, {&at, 1});
+  if (!values.ok()) return false;
+  for (const model::SweptValues& swept : *values) {
+    model::Number* const number = number_of(probed.network.branches[swept.branch.index()].part);
+    if (number == nullptr) return false;
+    *number = {swept.values.front(), {}};
+  }
+  return true;
+}
+
 bool freeze(model::Network& network, const model::Circuit& circuit, double at) {
   for (model::Branch& branch : network.branches) {
     model::Number* const number = number_of(branch.part);

@@ -25,6 +25,10 @@ namespace divide {
                                                                          const model::SensorDeclaration& sensor,
                                                                          std::span<const double> at);
 
+// Puts the numbers that the swept branches have at one measurand in their place. False where one has none there.
+[[nodiscard]] bool hold(model::ProbedNetwork& probed, const model::Circuit& circuit,
+                        const model::SensorDeclaration& sensor, double at);
+
 // Puts numbers in place of every value that depends on a swept parameter, at one measurand: for looking at a network at
 // one point. False where an expression has no value there.
 [[nodiscard]] bool freeze(model::Network& network, const model::Circuit& circuit, double at);

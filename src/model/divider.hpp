@@ -62,6 +62,8 @@ struct TapCandidate {
   bool declared = false;  // a declared role settled it
   std::vector<PartName> branches;
   bool only_way = false;  // an arm though its weight is below the limit: no other leads to a second rail
+  double of_swing = 0;    // weight_volts, of the pin's swing over the sweep; 0 where the swing is not known
+  double share = 1;       // how far its own node moves then, of the candidate whose node moves farthest
 };
 
 // What the plan overrides at each point of the sweep.
@@ -112,6 +114,12 @@ struct Divider {
   std::optional<OnePort>
       sensor_form;          // the same where only the sensor itself is not linear: tells what resistance it amounts to
   std::vector<NetId> nets;  // of the whole network, rails left out
+  // "RT2 at 25 degC": where other sensors on the network stand while this one is swept; the reading is the same wherever
+  // they do.
+  std::vector<std::string> held;
+  // "VDD at 2 V": where other sensors on the network make a leakage count more than where they are held; empty where
+  // none does. leakage_amperes are the declared ones times that.
+  std::string leakage_where;
 
   std::vector<UnmodelledTouch> unmodelled;
   std::vector<SuspectValue> suspects;    // in the network

@@ -63,6 +63,17 @@ void optional_row(Page& page, std::string_view label, const std::string& text) {
   if (!text.empty()) page.row(label, text);
 }
 
+// Other sensors on the network that the reading does not depend on: its volts and ohms are those with them there.
+std::string held_text(const std::vector<std::string>& held) {
+  constexpr std::size_t most = 5;
+  std::string out;
+  for (std::size_t i = 0; i < held.size() && i < most; ++i) out += (i == 0 ? "" : ", ") + held[i];
+  if (held.size() > most) out += fmt::format(" and {} more", held.size() - most);
+  return out.empty() ? out
+                     : out + (held.size() == 1 ? "; the reading does not depend on it"
+                                               : "; the reading does not depend on them");
+}
+
 // What is said of a divider however the run goes.
 void found_rows(Page& page, const model::AuditedInput& input, const model::BoardReport& board) {
   const model::Divider& divider = input.divider;
@@ -74,6 +85,9 @@ void found_rows(Page& page, const model::AuditedInput& input, const model::Board
   optional_row(page, "tap", divider.tap.valid() ? shown(net_name(board, divider.tap)) : "");
   optional_row(page, "sense path", joined(divider.sense));
   optional_row(page, "load", joined(divider.load));
+  optional_row(page, "held still", held_text(divider.held));
+  if (!divider.leakage_where.empty())
+    page.row("leakage", fmt::format("counted with {}, where it moves the reading most", divider.leakage_where));
   if (divider.bare_form) {
     const model::OnePort& form = *divider.bare_form;
     // Once solved, the form is that of the reading: where an end of the range moves with the divider, not the tap's

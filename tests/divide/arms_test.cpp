@@ -181,7 +181,7 @@ TEST_CASE("a sensor whose far end leads on through a switch or transistor is not
   const auto board = board_of(supply + "R1 VCC PIN 10k\nRT PIN S 10k\nV2 G 0 5\n" + part, declared);
   CHECK(board.only().not_audited ==
         test::Texts{"the far end of sensor RT leads to net S and on through " + part.substr(0, 2) +
-                    " only; this version takes resistances and sources for arms"});
+                    " only; this version takes resistances, rails and current sources for arms"});
   CHECK(board.only().no_divider.empty());
 }
 
@@ -190,25 +190,106 @@ TEST_CASE("a pull-up that leads on through a part that is no arm is not audited,
     return board_of(supply + "RT PIN 0 10k\nR1 P PIN 10k\n" + netlist, declared);
   };
   const auto switched = board_with("M1 P G VCC VCC PM\nV2 G 0 0\n.model PM PMOS(VTO=-1)\n");
-  CHECK(switched.only().not_audited ==
-        test::Texts{"R1 leads to net P and on through M1 only; this version takes resistances and sources for arms"});
+  CHECK(switched.only().not_audited == test::Texts{"R1 leads to net P and on through M1 only; this version takes "
+                                                   "resistances, rails and current sources for arms"});
   const auto buffered = board_with("R7 VCC Q 1k\nR8 Q 0 1k\nE1 P 0 Q 0 1\n");
-  CHECK(buffered.only().not_audited ==
-        test::Texts{"R1 leads to net P and on through E1 only; this version takes resistances and sources for arms"});
+  CHECK(buffered.only().not_audited == test::Texts{"R1 leads to net P and on through E1 only; this version takes "
+                                                   "resistances, rails and current sources for arms"});
 }
 
-TEST_CASE("a light pull-up before a heavy attenuator is an arm: nothing else leads to a second rail") {
+TEST_CASE("a light pull-up before a heavy attenuator is an arm: at its own node it weighs as much") {
   const auto board = board_of("V1 V24 0 24\nR1 V24 A 10k\nRT A 0 10k\nR2 A PIN 150k\nR3 PIN 0 10k\n",
                               "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"PIN\"]\n" + ntc("RT"));
   CHECK(drawn(board, board.only()) == "V24 > R1 > PIN > RT R2 R3 > 0");
   const auto& candidates = board.only().candidates;
   REQUIRE(candidates.size() == 2);
-  CHECK(candidates[0].only_way);
+  CHECK(candidates[0].arm);
+  CHECK_FALSE(candidates[0].only_way);
   CHECK(candidates[0].weight_volts < candidates[1].weight_volts / 10);
-  CHECK_FALSE(candidates[1].only_way);
+  CHECK(candidates[0].share > 0.5);
   // 24 V over 10k and 10k || 160k, and 1/16 of that (voltage divider rule).
   const double tap = 24 * (1 / (1 / 10e3 + 1 / 160e3)) / (10e3 + 1 / (1 / 10e3 + 1 / 160e3)) / 16;
   CHECK(board.bare_volts(board.only(), 3)[1] == Approx(tap).epsilon(1e-12));
+}
+
+TEST_CASE("the fixed resistor of a divider before a heavy attenuator is an arm on either side and before a bias") {
+  const auto of = [](const std::string& netlist) {
+    const auto board = board_of("V1 V24 0 24\nV2 VB 0 1.65\n" + netlist + "R2 A PIN 150k\n",
+                                "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"PIN\"]\n" + ntc("RT"));
+    return drawn(board, board.only());
+  };
+  CHECK(of("RT V24 A 10k\nR1 A 0 10k\nR3 PIN 0 10k\n") == "V24 > RT R2 > PIN > R1 R3 > 0");
+  CHECK(of("RT V24 A 10k\nRL V24 A 22k\nR1 A 0 10k\nR3 PIN 0 10k\n") == "V24 > RT RL R2 > PIN > R1 R3 > 0");
+  CHECK(of("R1 V24 A 10k\nRT A 0 10k\nR3 PIN VB 10k\n") == "V24 > R1 > PIN > RT R3 R2 > 0");
+}
+
+TEST_CASE("a wire-break pull-up before a heavy attenuator stays load") {
+  const auto board =
+      board_of("V1 V24 0 24\nRT CON 0 10k\nR9 V24 CON 1MEG\nR8 CON T 10\nR1 V24 T 10k\nR2 T PIN 150k\nR3 PIN 0 10k\n",
+               "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"PIN\"]\n" + ntc("RT"));
+  CHECK(test::list(board.only().load) == "R9");
+  CHECK(board.only().candidates.front().of_swing < 0.05);
+}
+
+TEST_CASE("how much of the swing a load moves is told with it") {
+  // At 32.56 kohm (0 degC) the tap is seen through 7.65 kohm: 100 kohm behind it takes 7.1 % (voltage divider rule).
+  const auto board = board_of(supply + "R1 VCC T 10k\nRT T 0 10k\nR2 T PIN 100\nR3 PIN 0 100k\n", declared);
+  const auto& load = board.only().candidates.back();
+  CHECK(test::list(load.branches) == "R3");
+  CHECK_FALSE(load.arm);
+  CHECK(load.weight_volts == Approx(0.18).epsilon(0.05));
+  CHECK(load.of_swing > 0.1);
+}
+
+TEST_CASE("resistors in parallel from the tap to another input are load, not arm and sense path at once") {
+  const auto board = board_of(supply + "R1 VCC A 10k\nRT A 0 10k\nR5 A P1 1k\nR6 A P2 2k\nR7 A P2 2k\n",
+                              converter("\"P1\", \"P2\"") + ntc("RT"));
+  CHECK(drawn(board, board.at("P1")) == "VCC > R1 > A > RT > 0; sense R5; load R6 R7");
+  CHECK(drawn(board, board.at("P2")) == "VCC > R1 > A > RT > 0; sense R6 R7; load R5");
+}
+
+TEST_CASE("a resistor under a link is load, and listed once") {
+  CHECK(picture("R1 VCC A 10k\nRT A 0 10k\nR5 A B 1k\nR0 A B 0\nR6 B PIN 1k\n") ==
+        "VCC > R1 > A > RT > 0; sense R0 R6; load R5");
+}
+
+TEST_CASE("an input joined to a rail behind a resistance by a link has no divider") {
+  const auto board = board_of("R1 VCC A 10k\nRT A 0 10k\nR2 A PIN 22k\nR0 PIN VCC 0\n",
+                              declared + "[rail.VCC]\nvolts = 3.3\nohms = 1\n");
+  CHECK(board.only().no_divider == "it is tied to rail VCC");
+}
+
+TEST_CASE("an input behind a follower is not taken for one that nothing drives") {
+  const std::string draws = GENERATE(as<std::string>{}, "C1 PIN 0 10n\n", "R3 PIN 0 100k\n");
+  const auto board = board_of(supply + "R1 VCC A 10k\nRT A 0 10k\nE1 B 0 A 0 1\nR2 B PIN 1k\n" + draws, declared);
+  CHECK(board.only().no_divider.empty());
+  CHECK(board.only().not_audited ==
+        test::Texts{"sensor RT moves it through E1; this version follows a sensor along resistances to the pin only"});
+}
+
+TEST_CASE("an input that a source drives which nothing moves, and no rail, has no divider") {
+  CHECK(picture("RT VCC 0 10k\nR1 VCC A 10k\nR2 A 0 10k\nE1 B 0 A 0 1\nR3 B PIN 1k\n") ==
+        "no resistive way leads from it to a rail, and nothing declared moves what drives it");
+}
+
+TEST_CASE("two dividers on a buffered supply are not audited, and the buffer is named") {
+  const auto board =
+      board_of(supply +
+                   "R8 VCC Q 10k\nR9 Q 0 10k\nE1 EXC 0 Q 0 1\nR1 EXC A 10k\nRT A 0 10k\nR2 EXC B 10k\nRU "
+                   "B 0 10k\n",
+               converter("\"A\"") + ntc("RT") + ntc("RU"));
+  CHECK(board.only().not_audited ==
+        test::Texts{"R1 leads to net EXC and on through E1; this version takes resistances, rails and current sources "
+                    "for arms"});
+}
+
+TEST_CASE("an end of the range between tap and pin is refused") {
+  const auto board =
+      board_of(supply + "R1 VCC T 10k\nRT T 0 10k\nR2 T REF 10\nR3 REF PIN 220\n",
+               "[converter.ADC]\nbits = 12\nlow = \"REF\"\nhigh = \"VCC\"\ninputs = [\"PIN\"]\n" + ntc("RT"));
+  CHECK(board.only().not_audited ==
+        test::Texts{
+            "net REF, an end of its range, lies between tap and pin: what the divider reads cannot be told there"});
 }
 
 TEST_CASE("the heaviest of the pull-ups below the share is the arm, lighter ones are load") {

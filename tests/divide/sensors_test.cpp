@@ -29,9 +29,9 @@ double middle(const test::Board& board) {
 }
 
 Texts several(const std::string& said) {
-  return {
-      said +
-      "; this version sweeps one: leave out the [sensor.NAME] of those that may stand still at the netlist's values"};
+  return {said +
+          "; this version sweeps one: leave out the [sensor.NAME] of those that may stand still at the netlist's "
+          "values, or declare them for a run of their own (--with)"};
 }
 
 // Not audited for one reason.
@@ -40,6 +40,11 @@ std::string why(const test::Board& board, const std::string& input_name) {
   REQUIRE(divider.not_audited.size() == 1);
   CHECK_FALSE(divider.sensor.has_value());
   return divider.not_audited.front();
+}
+
+// A 12-bit converter from 0 to 3.3 V, whatever the rails do.
+std::string fixed_range(const std::string& inputs) {
+  return "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [" + inputs + "]\n";
 }
 
 // Two thermistors, each with a divider of its own, on one rail with a source resistance.
@@ -181,21 +186,21 @@ TEST_CASE("ground cannot be swept") {
 }
 
 TEST_CASE("sensors that share the drop of a rail are told apart by none: each input refuses, and the rail is named") {
-  const auto board = board_of(shared_rail, converter("\"A\", \"B\"") + ntc("RT") + ntc("RU") + rail_with_ohms);
-  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, RU through rail VCC)"));
-  CHECK(Texts{why(board, "B")} == several("2 sensors move it (RT through rail VCC, RU)"));
+  const auto board = board_of(shared_rail, fixed_range("\"A\", \"B\"") + ntc("RT") + ntc("RU") + rail_with_ohms);
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT; RU through rail VCC)"));
+  CHECK(Texts{why(board, "B")} == several("2 sensors move it (RT through rail VCC; RU)"));
 }
 
 TEST_CASE("a second sensor counts whether or not an input is declared on its divider") {
-  const auto board = board_of(shared_rail, converter("\"A\"") + ntc("RT") + ntc("RU") + rail_with_ohms);
-  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, RU through rail VCC)"));
+  const auto board = board_of(shared_rail, fixed_range("\"A\"") + ntc("RT") + ntc("RU") + rail_with_ohms);
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT; RU through rail VCC)"));
 }
 
 TEST_CASE("a sensor on a rail with ohms whose monitor is audited is a second one") {
   const auto board = board_of("R1 VBAT A 10k\nR2 A 0 10k\nR3 VBAT X 1k\nRT X 0 1k\n",
                               "[converter.ADC]\nbits = 12\nhigh = 3.3\ninputs = [\"A\"]\n" + ntc("RT") +
                                   "[sensor.VBAT]\nkind = \"voltage\"\nfrom = 3\nto = 3.3\n[rail.VBAT]\nohms = 100\n");
-  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT through rail VBAT, VBAT)"));
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT through rail VBAT; VBAT)"));
 }
 
 TEST_CASE("a sensor that draws from the tap through a controlled source is a second one, and the source is named") {
@@ -203,21 +208,21 @@ TEST_CASE("a sensor that draws from the tap through a controlled source is a sec
       board_of(top + "RT A 0 10k\nG1 B 0 A 0 0.1m\nR2 VCC B 1k\nRU B 0 1k\n",
                "[converter.ADC]\nbits = 12\nhigh = \"VCC\"\ninputs = [\"A\", \"B\"]\n" + ntc("RT") + ntc("RU"));
   CHECK(board.at("A").not_audited.empty());
-  CHECK(Texts{why(board, "B")} == several("2 sensors move it (RT through G1, RU)"));
+  CHECK(Texts{why(board, "B")} == several("2 sensors move it (RT through G1; RU)"));
 }
 
 TEST_CASE("a sensor in the network of the range's end is a second one") {
   const auto board = board_of(top + "RT A 0 10k\nR3 VCC REF 1k\nR4 REF X 10k\nRU X 0 10k\n",
                               "[converter.ADC]\nbits = 12\nhigh = \"REF\"\ninputs = [\"A\"]\n" + ntc("RT") + ntc("RU"));
-  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, RU through REF, an end of its range)"));
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT; RU through REF, an end of its range)"));
 }
 
 TEST_CASE("a parameter that moves another divider on the rail is a second sensor") {
   const auto board = board_of(
       "RA VCC A 1k\nRT A 0 10k\nRB VCC B 1k\nX2 B 0 BEAD R=10k\n.subckt BEAD P N PARAMS: R=1\nR1 P N "
       "{R}\n.ends\n",
-      converter("\"A\"") + ntc("RT") + parameter("X2", "R") + rail_with_ohms);
-  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT, X2 through rail VCC)"));
+      fixed_range("\"A\"") + ntc("RT") + parameter("X2", "R") + rail_with_ohms);
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (RT; X2 through rail VCC)"));
 }
 
 TEST_CASE("a sensor that acts through a controlled source alone is not audited, and the source is named") {
@@ -229,7 +234,7 @@ TEST_CASE("a sensor that acts through a controlled source alone is not audited, 
 
 TEST_CASE("a sensor that acts through the drop of a rail alone is not audited, and the rail is named") {
   const auto board = board_of("R0 VCC A 10k\nRT A 0 10k\nR1 VCC PIN 2k\nR2 PIN 0 10k\n",
-                              converter("\"PIN\"") + ntc("RT") + rail_with_ohms);
+                              fixed_range("\"PIN\"") + ntc("RT") + rail_with_ohms);
   CHECK(why(board, "PIN") ==
         "sensor RT moves it through rail VCC; this version follows a sensor along resistances to the pin only");
 }
@@ -294,6 +299,7 @@ TEST_CASE("a sensor on a rail that a monitor sweeps and that is the range is aud
   const auto& divider = board.at("A");
   CHECK(divider.not_audited.empty());
   CHECK(divider.sensor_name == "RT");
+  CHECK(divider.held == Texts{"BATT at rest"});
   if (ohms.empty()) {
     CHECK(drawn(board, divider) == "BATT > R3 > A > RT > 0");
     CHECK(board.pin_volts(divider, 3)[1] == Approx(6).epsilon(1e-12));
@@ -307,8 +313,94 @@ TEST_CASE("a leakage counts as it would where the rail that is the range stands 
                "[converter.ADC]\nbits = 12\nhigh = \"BATT\"\nleakage = \"1uA\"\ninputs = [\"A\", \"M\"]\n" +
                    voltage("BATT") + ntc("RT"));
   REQUIRE(board.at("A").whole.leakage_amperes.size() == 1);
-  CHECK(board.at("A").whole.leakage_amperes[0] == Approx(1e-6 * 12 / 9).epsilon(1e-12));
+  CHECK(board.at("A").whole.leakage_amperes[0] == Approx(1e-6 * 12 / 9).epsilon(1e-9));
   CHECK(board.at("M").whole.leakage_amperes[0] == Approx(1e-6).epsilon(1e-12));
+  CHECK(board.at("A").leakage_where == "BATT at 9 V");
+  CHECK(board.at("M").leakage_where.empty());
+}
+
+TEST_CASE("a leakage counts no less than at rest where the sweep of the rail lies above that") {
+  const auto board = board_of("V2 BATT 0 6\nR1 BATT M 30k\nR2 M 0 10k\nR3 BATT A 10k\nRT A 0 10k\n",
+                              "[converter.ADC]\nbits = 12\nhigh = \"BATT\"\nleakage = \"1uA\"\ninputs = [\"A\"]\n" +
+                                  voltage("BATT") + ntc("RT"));
+  CHECK(board.at("A").whole.leakage_amperes[0] == Approx(1e-6).epsilon(1e-12));
+  CHECK(board.at("A").leakage_where.empty());
+}
+
+// Two dividers on one source, whatever that source is, are each in proportion to it (superposition).
+TEST_CASE("sensors that share what is also the range are each audited, the others at the middle of their ranges") {
+  struct Case {
+    std::string netlist, more;
+  };
+  const std::string dividers = "R3 REF A 10k\nRT A 0 10k\nR4 REF B 1k\nRU B 0 1k\n";
+  const auto one = GENERATE_COPY(values<Case>({
+      {dividers, "[rail.REF]\nvolts = 3.3\nohms = 0.2\n"},
+      {"V1 VCC 0 5\nR1 VCC REF 1k\nR2 REF 0 2k\n" + dividers, ""},
+  }));
+  const auto board = board_of(one.netlist, "[converter.ADC]\nbits = 12\nhigh = \"REF\"\ninputs = [\"A\", \"B\"]\n" +
+                                               ntc("RT") + ntc("RU") + one.more);
+  for (const std::string name : {"A", "B"}) {
+    const auto& divider = board.at(name);
+    CHECK(divider.not_audited.empty());
+    CHECK(divider.sensor_name == (name == "A" ? "RT" : "RU"));
+    CHECK(divider.whole.swept.size() == 1);
+    CHECK(divider.held == Texts{name == "A" ? "RU at 25 degC" : "RT at 25 degC"});
+  }
+  // The pin's volts over those of its range: 1/2 at 10 kohm (voltage divider rule), wherever RU stands.
+  if (one.more.empty()) return;
+  const auto volts = board.pin_volts(board.at("A"), 3);
+  CHECK(volts[1] == Approx(1.65).epsilon(1e-3));
+}
+
+TEST_CASE("a sensor whose effect through the rail cancels in a fixed divider leaves that one without a sensor") {
+  const auto board = board_of("R0 VCC A 10k\nRT A 0 10k\nR1 VCC PIN 2k\nR2 PIN 0 10k\n",
+                              converter("\"PIN\"") + ntc("RT") + rail_with_ohms);
+  CHECK(board.only().no_sensor);
+  CHECK(board.only().not_audited.empty());
+}
+
+TEST_CASE("a leakage counts as where the other sensors on a soft reference pull it lowest") {
+  // REF is 5 V behind 10k, loaded by 20k and by RU under 10k: lowest at RU's least ohms. 1 uA into A moves A/REF by
+  // 1u * (10k || RT) / REF, and by what it lifts REF itself: none, but for what RT takes.
+  const auto board = board_of(
+      "V1 VCC 0 5\nR1 VCC REF 1k\nR2 REF 0 2k\nR3 REF A 10k\nRT A 0 10k\nR4 REF B 10k\nRU B 0 10k\n",
+      "[converter.ADC]\nbits = 12\nhigh = \"REF\"\nleakage = \"1nA\"\ninputs = [\"A\"]\n" + ntc("RT") + ntc("RU"));
+  const auto& divider = board.only();
+  REQUIRE(divider.whole.leakage_amperes.size() == 1);
+  CHECK(divider.whole.leakage_amperes[0] > 1e-9 * 1.005);
+  CHECK(divider.whole.leakage_amperes[0] < 1e-9 * 1.03);
+}
+
+TEST_CASE("of many sensors on a rail the first are named, by the way they come in") {
+  std::string netlist = "R1 VCC A 10k\nRT A 0 10k\n";
+  std::string sensors = ntc("RT");
+  for (const std::string n : {"1", "2", "3", "4", "5", "6", "7"}) {
+    netlist += "RA" + n + " VCC N" + n + " 1k\nRS" + n + " N" + n + " 0 1k\n";
+    sensors += ntc("RS" + n);
+  }
+  const auto board = board_of(netlist, fixed_range("\"A\"") + sensors + rail_with_ohms);
+  CHECK(Texts{why(board, "A")} ==
+        several("8 sensors move it (RT; RS1, RS2, RS3, RS4, RS5 and 2 more through rail VCC)"));
+}
+
+TEST_CASE("a parameter that moves another resistor of a fixed divider is named with that resistor") {
+  const auto board =
+      board_of(".param P=1k\nRS N3 N2 {P}\nR1 VCC A 1500\nR2 VCC N1 68k\nR3 N1 N2 68k\nR4 N1 N3 100\nR5 A 0 {70k-P}\n",
+               fixed_range("\"A\"") + parameter("RS", "P") + rail_with_ohms);
+  CHECK(why(board, "A") ==
+        "sensor RS moves it through R5; this version follows a sensor along resistances to the pin only");
+}
+
+TEST_CASE("a parameter that moves a rail which is the range leaves another sensor on it alone") {
+  const std::string netlist = ".param x=3.3\nV1 V 0 {x}\nR1 V A 10k\nRT A 0 10k\nR2 V B 10k\nRB B 0 {x*1k}\n";
+  const std::string sensors = ntc("RT") + "[sensor.RB]\nkind = \"parameter\"\nsweep = \"x\"\nfrom = 3\nto = 3.6\n";
+  const auto with = [&](const std::string& high) {
+    return board_of(netlist, "[converter.ADC]\nbits = 12\nhigh = " + high + "\ninputs = [\"A\"]\n" + sensors);
+  };
+  const auto cancels = with("\"V\"");
+  CHECK(cancels.only().not_audited.empty());
+  CHECK(cancels.pin_volts(cancels.only(), 3)[1] == Approx(1.65).epsilon(1e-12));
+  CHECK(Texts{why(with("3.3"), "A")} == several("2 sensors move it (RT; RB through rail V)"));
 }
 
 TEST_CASE("a rail that a monitor sweeps is a second sensor where the reading goes with it") {
@@ -331,7 +423,7 @@ TEST_CASE("a rail that a monitor sweeps and that is an end of the range alone is
   const auto board =
       board_of("V1 VCC 0 12\nV2 BATT 0 12\nR3 VCC A 10k\nRT A 0 10k\n",
                "[converter.ADC]\nbits = 12\nhigh = \"BATT\"\ninputs = [\"A\"]\n" + voltage("BATT") + ntc("RT"));
-  CHECK(Texts{why(board, "A")} == several("2 sensors move it (BATT through BATT, an end of its range, RT)"));
+  CHECK(Texts{why(board, "A")} == several("2 sensors move it (BATT through BATT, an end of its range; RT)"));
 }
 
 TEST_CASE("a sensor on a rail that a monitor sweeps and that nobody gives a voltage is not audited") {

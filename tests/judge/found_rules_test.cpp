@@ -34,6 +34,7 @@ model::AuditedInput with_candidates(double first, double second) {
   model::TapCandidate b = a;
   b.net = model::NetId{2};
   b.weight_volts = second;
+  b.share = second / first;
   b.branches = {{"X1.R5", {}}, {"R6", {}}};
   input.divider.candidates = {b, a};
   return input;
@@ -206,12 +207,12 @@ TEST_CASE("ambiguous-tap: two arms at two nodes are named, the heavier first") {
   CHECK(*found[0].value == Approx(0.25));
   CHECK(*found[0].limit == 0.1);
   CHECK(found[0].unit == "fraction");
-  CHECK(
-      found[0].message ==
-      "more than one node counts as an arm (10 % of the heaviest is enough): without its branches the pin moves: R3 at "
-      "TAP by 1.2 V, X1.R5 and R6 at CONN by 300 mV; where firmware does not reckon with one, say [part.\"X1.R5\"] "
-      "role "
-      "= \"load\"");
+  CHECK(found[0].message ==
+        "more than one node counts as an arm (10 % of the heaviest, each at its own node, is enough): without its "
+        "branches the pin moves: R3 at "
+        "TAP by 1.2 V, X1.R5 and R6 at CONN by 300 mV; where firmware does not reckon with one, say [part.\"X1.R5\"] "
+        "role "
+        "= \"load\"");
 }
 
 TEST_CASE("ambiguous-tap: exactly the limit makes an arm, and a raised limit silences the note") {
@@ -234,6 +235,25 @@ TEST_CASE("ambiguous-tap: an arm below the limit that alone leads to a second ra
         "without its branches the pin moves: X1.R5 and R6 at CONN by 60 mV, R3 at TAP by 1.2 V; the first is below the "
         "10 % of the heaviest that makes an arm, and counts as one because nothing else leads to a second rail; where "
         "that is right, say [part.\"X1.R5\"] role = \"arm\"");
+}
+
+TEST_CASE("ambiguous-tap: what is taken for load and moves the reading by more than a twentieth of its swing is told") {
+  const fixtures::SmallBoard board;
+  auto input = with_candidates(1.2, 0.06);
+  auto& load = input.divider.candidates[0];
+  load.arm = false;
+  load.of_swing = 0.05;
+  CHECK(findings_of(RuleId::ambiguous_tap, input, nullptr, board.view()).empty());
+  load.of_swing = 0.08;
+  const auto found = findings_of(RuleId::ambiguous_tap, input, nullptr, board.view());
+  REQUIRE(found.size() == 1);
+  CHECK(found[0].level == Level::note);
+  CHECK(*found[0].value == Approx(0.05));
+  CHECK(found[0].message ==
+        "taken for load, though without its branches the pin moves: X1.R5 and R6 at CONN by 60 mV (8 % of its swing); "
+        "where firmware reckons with one, say [part.\"X1.R5\"] role = \"arm\"");
+  load.declared = true;
+  CHECK(findings_of(RuleId::ambiguous_tap, input, nullptr, board.view()).empty());
 }
 
 TEST_CASE("ambiguous-tap: one arm is no question, nor is one whose role is declared") {

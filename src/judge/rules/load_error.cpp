@@ -64,9 +64,12 @@ std::string remedy(model::LoadKind kind, const model::Figures& figures) {
          "with the part)";
 }
 
-std::string help_text(const model::Figures& figures, const model::Contributor& largest) {
+std::string help_text(const model::Divider& divider, const model::Figures& figures, const model::Contributor& largest) {
   const std::string name = base::printable_short(largest.name);
-  return (name.empty() ? "" : fmt::format("; {} contributes most", name)) + "; " + remedy(largest.kind, figures);
+  const bool elsewhere = largest.kind == model::LoadKind::leakage && !divider.leakage_where.empty();
+  const std::string where = elsewhere ? fmt::format(" (with {})", divider.leakage_where) : "";
+  return (name.empty() ? "" : fmt::format("; {} contributes most{}", name, where)) + "; " +
+         remedy(largest.kind, figures);
 }
 
 void run(const InputContext& context, Findings& out) {
@@ -82,7 +85,7 @@ void run(const InputContext& context, Findings& out) {
   finding.message =
       fmt::format("what loads the divider bends the reading by up to {}{}, at {}, where {}{} is the most accepted{}{}",
                   texts.value, unit, measurand_text(*finding.at, context.unit), texts.limit, unit, ruler->reason,
-                  help_text(context.input.figures, ruler->largest));
+                  help_text(context.input.divider, context.input.figures, ruler->largest));
   out.add(std::move(finding));
 }
 
