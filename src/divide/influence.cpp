@@ -5,6 +5,7 @@
 #include <cmath>
 #include <fmt/format.h>
 #include <fmt/ranges.h>
+#include <initializer_list>
 
 #include "base/text.hpp"
 #include "divide/sweep_values.hpp"
@@ -17,6 +18,8 @@ constexpr double same_lsb = 1e-4;
 constexpr double rounding = 1e-11;   // of the reading: what is left of nothing
 constexpr double no_effect = 1e-13;  // of the range
 constexpr double worth_telling = 1.01;
+constexpr double same_share = 1e-9;
+constexpr double uneven = 0.05;
 
 bool share_a_parameter(const Graph& graph, std::span<const Mover> movers) {
   std::vector<std::uint32_t> seen;
@@ -32,6 +35,27 @@ const Rail* rail_swept_by(const Graph& graph, std::size_t sensor) {
   const auto& rails = graph.rails().rails;
   const auto at = std::find_if(rails.begin(), rails.end(), [&](const Rail& rail) { return rail.sensor == sensor; });
   return at == rails.end() ? nullptr : &*at;
+}
+
+// What is wanted, and what there is of it.
+struct Wanted {
+  double wanted = 0;
+  double has = 0;
+};
+
+// The factor that gives all that is wanted; rounding asks for none. Nothing where no factor does.
+std::optional<double> raise(std::initializer_list<Wanted> pairs) {
+  double factor = 1;
+  for (const Wanted& pair : pairs) {
+    if (std::fabs(pair.wanted) <= no_effect) continue;
+    if (std::fabs(pair.has) <= no_effect) return std::nullopt;
+    if (const double ratio = pair.wanted / pair.has; ratio > 1 + same_share) factor = std::max(factor, ratio);
+  }
+  return factor;
+}
+
+bool is_even(double up, double down) {
+  return std::fabs(up + down) <= uneven * std::max(std::fabs(up), std::fabs(down)) + no_effect;
 }
 
 }  // namespace
@@ -68,7 +92,11 @@ bool Influence::add(const Subject& subject, const model::Sheet& sheet, const Mov
   return true;
 }
 
-std::optional<Influence::Reading> Influence::read(const Stands& stands, bool with_leakage) const {
+double Influence::Reading::largest(std::size_t leakage) const {
+  return std::max(std::fabs(plus[leakage]), std::fabs(minus[leakage]));
+}
+
+std::optional<Influence::Reading> Influence::read(const Stands& stands, const Scales& scales) const {
   network::Values values = network::own_values(probed_.network);
   for (std::size_t i = 0; i < moved_.size(); ++i) {
     const bool rests = stands[i] == Stand::rest && moved_[i].rests;
@@ -77,26 +105,33 @@ std::optional<Influence::Reading> Influence::read(const Stands& stands, bool wit
   }
   const auto solver = network::Solver::make(probed_.network, values);
   if (!solver.ok()) return std::nullopt;
-  const auto solve = [&]() -> std::optional<double> {
+  bool solved_all = true;
+  const auto solve = [&] {
     const auto solved = solver->with_sources(values);
-    if (!solved.ok()) return std::nullopt;
-    const double low = probed_.low.valid() ? solver->volts(*solved, probed_.low) : input_->nominal_low;
-    const double high = probed_.high.valid() ? solver->volts(*solved, probed_.high) : input_->nominal_high;
-    const double reading = input_->gain * (solver->volts(*solved, probed_.probe) - low) / (high - low);
-    return std::isfinite(reading) ? std::optional(std::copysign(1.0, high - low) * reading) : std::nullopt;
+    const auto at = [&](model::NodeId node, double otherwise) {
+      return node.valid() && solved.ok() ? solver->volts(*solved, node) : otherwise;
+    };
+    const double low = at(probed_.low, input_->nominal_low);
+    const double high = at(probed_.high, input_->nominal_high);
+    const double reading = input_->gain * (at(probed_.probe, 0) - low) / (high - low);
+    solved_all = solved_all && solved.ok() && std::isfinite(reading);
+    return std::copysign(1.0, high - low) * reading;
   };
-  const auto own = solve();
-  if (!own) return std::nullopt;
-  Reading reading{*own, {}};
-  for (std::size_t k = 0; with_leakage && k < probed_.leakages.size(); ++k) {
-    double& amperes = values[probed_.leakages[k].index()];
-    amperes = probed_.leakage_amperes[k];
-    const auto leaking = solve();
-    amperes = 0;
-    if (!leaking) return std::nullopt;
-    reading.leaking.push_back(std::fabs(*leaking - *own));
+  const auto leak = [&](std::size_t k, double sign) {
+    values[probed_.leakages[k].index()] = sign * scales[k] * probed_.leakage_amperes[k];
+  };
+  Reading reading;
+  reading.own = solve();
+  for (std::size_t k = 0; k < scales.size(); ++k)
+    for (const double sign : {1.0, -1.0, 0.0}) {
+      leak(k, sign);
+      if (sign != 0) (sign > 0 ? reading.plus : reading.minus).push_back(solve() - reading.own);
+    }
+  for (const bool up : {true, false}) {
+    for (std::size_t k = 0; k < scales.size(); ++k) leak(k, (reading.plus[k] > 0) == up ? 1 : -1);
+    (up ? reading.up : reading.down) = solve() - reading.own;
   }
-  return reading;
+  return solved_all ? std::optional(std::move(reading)) : std::nullopt;
 }
 
 bool Influence::stand_still(std::span<const std::size_t> movers) const {
@@ -110,7 +145,7 @@ bool Influence::stand_still(std::span<const std::size_t> movers) const {
       // All at one place, then each at another than its neighbours.
       for (std::size_t i = 0; i < movers.size(); ++i)
         stands[movers[i]] = stand[pattern < 3 ? pattern : (i / (pattern - 2) + pattern) % 3];
-      const auto reading = read(stands, false);
+      const auto reading = read(stands, {});
       if (!reading) return false;
       if (!first) first = reading->own;
       if (std::fabs(reading->own - *first) > same * std::max(1.0, std::fabs(*first))) return false;
@@ -123,16 +158,17 @@ bool Influence::stand_still(std::span<const std::size_t> movers) const {
 // largest is where each stands at the end that makes it larger.
 std::vector<Influence::Stands> Influence::worst_stands(Stands rest, std::span<const std::size_t> still) const {
   std::vector<Stands> worst(probed_.leakages.size(), rest);
+  const Scales unscaled(worst.size(), 1.0);
   for (const std::size_t mover : still) {
     std::array<std::optional<Reading>, 2> ends;
     for (const bool to : {false, true}) {
       Stands moved = rest;
       moved[mover] = to ? Stand::to : Stand::from;
-      ends[to ? 1 : 0] = read(moved, true);
+      ends[to ? 1 : 0] = read(moved, unscaled);
     }
     if (!ends[0] || !ends[1]) return {};
     for (std::size_t k = 0; k < worst.size(); ++k)
-      worst[k][mover] = ends[1]->leaking[k] > ends[0]->leaking[k] ? Stand::to : Stand::from;
+      worst[k][mover] = ends[1]->largest(k) > ends[0]->largest(k) ? Stand::to : Stand::from;
   }
   return worst;
 }
@@ -140,27 +176,51 @@ std::vector<Influence::Stands> Influence::worst_stands(Stands rest, std::span<co
 std::optional<LeakageShare> Influence::leakage_share(std::size_t own, std::span<const std::size_t> still) const {
   LeakageShare share{std::vector<double>(probed_.leakages.size(), 1.0), {}};
   if (probed_.leakages.empty()) return share;
-  const Stands rest(moved_.size(), Stand::rest);
-  const auto worst = worst_stands(rest, still);
+  auto worst = worst_stands(Stands(moved_.size(), Stand::rest), still);
   if (worst.empty()) return std::nullopt;
-  double largest = worth_telling;
-  for (const Stand stand : {Stand::from, Stand::middle, Stand::to}) {
-    Stands at_rest = rest;
-    at_rest[own] = stand;
-    const auto base = read(at_rest, true);
-    for (std::size_t k = 0; k < worst.size(); ++k) {
-      Stands at = worst[k];
-      at[own] = stand;
-      const auto reading = base ? read(at, true) : std::nullopt;
-      if (!reading) return std::nullopt;
-      if (reading->leaking[k] <= no_effect) continue;
-      if (base->leaking[k] <= no_effect) return std::nullopt;
-      const double ratio = reading->leaking[k] / base->leaking[k];
-      share.of_each[k] = std::max(share.of_each[k], ratio);
-      if (ratio > largest) largest = ratio, share.where = where_text(worst[k], still);
-    }
+  const Stands told = worst[own_leakage()];
+  std::sort(worst.begin(), worst.end());
+  worst.erase(std::unique(worst.begin(), worst.end()), worst.end());
+  constexpr int rounds = 6;  // what one share adds to the range's ends changes the others a little
+  for (int i = 0; i < rounds; ++i) {
+    const auto before = share.of_each;
+    if (!cover(share, worst, own)) return std::nullopt;
+    if (share.of_each == before) break;
   }
+  if (*std::max_element(share.of_each.begin(), share.of_each.end()) > worth_telling)
+    share.where = where_text(told, still);
   return share;
+}
+
+// Of the leakages that of the input itself, or the first.
+std::size_t Influence::own_leakage() const {
+  for (std::size_t k = 0; k < probed_.leakages.size(); ++k)
+    if (probed_.network.branches[probed_.leakages[k].index()].nodes[1] == probed_.probe) return k;
+  return 0;
+}
+
+// Raises the shares until what the leakages add with them is as much as at the worst stands. False where it cannot be.
+bool Influence::cover(LeakageShare& share, const std::vector<Stands>& worst, std::size_t own) const {
+  const Scales unscaled(share.of_each.size(), 1.0);
+  for (const Stands& stands : worst)
+    for (const Stand stand : {Stand::from, Stand::middle, Stand::to}) {
+      Stands at_rest(moved_.size(), Stand::rest);
+      Stands at = stands;
+      at_rest[own] = at[own] = stand;
+      const auto there = read(at, unscaled);
+      auto held = read(at_rest, share.of_each);
+      if (!held || !there || !is_even(there->up, there->down) || !is_even(held->up, held->down)) return false;
+      for (std::size_t k = 0; k < unscaled.size(); ++k) {
+        const auto factor = raise({{there->plus[k], held->plus[k]}, {there->minus[k], held->minus[k]}});
+        if (!factor) return false;
+        share.of_each[k] *= *factor;
+      }
+      held = read(at_rest, share.of_each);
+      const auto factor = held ? raise({{there->up, held->up}, {there->down, held->down}}) : std::nullopt;
+      if (!factor) return false;
+      for (double& one : share.of_each) one *= *factor;
+    }
+  return true;
 }
 
 std::string Influence::place_text(std::size_t mover, Stand stand) const {

@@ -34,8 +34,9 @@ class Influence {
   // network has no solution or the range's ends meet on the way.
   [[nodiscard]] bool stand_still(std::span<const std::size_t> movers) const;
 
-  // Over all that the still movers may do, while `own` moves. Nothing where a leakage moves the reading somewhere and
-  // not at rest.
+  // Over all that the still movers may do, while `own` moves: with leakages of these shares the held network's reading
+  // goes as far as anywhere. Nothing where a leakage moves the reading somewhere and not at rest, or one of them or all
+  // together so far that shares of it tell little (one sign's way differs from the other's by a twentieth).
   [[nodiscard]] std::optional<LeakageShare> leakage_share(std::size_t own, std::span<const std::size_t> still) const;
 
   // Where the network has to hold a mover: the middle of its range; nothing for a rail, which stays at rest.
@@ -55,13 +56,19 @@ class Influence {
     std::vector<std::vector<model::Override>> branches;  // likewise
   };
   struct Reading {
-    double own = 0;               // without leakage
-    std::vector<double> leaking;  // what each leakage alone adds
+    double own = 0;                   // without leakage
+    std::vector<double> plus, minus;  // what each leakage alone adds, by its sign
+    double up = 0, down = 0;          // what all of them add together, each with the sign for that
+
+    [[nodiscard]] double largest(std::size_t leakage) const;
   };
+  using Scales = std::vector<double>;  // of the leakages; empty: no leakage is wanted
 
   Influence(const Subject& subject) : input_(&subject.input) {}
   [[nodiscard]] bool add(const Subject& subject, const model::Sheet& sheet, const Mover& mover);
-  [[nodiscard]] std::optional<Reading> read(const Stands& stands, bool with_leakage) const;
+  [[nodiscard]] std::optional<Reading> read(const Stands& stands, const Scales& scales) const;
+  [[nodiscard]] std::size_t own_leakage() const;
+  [[nodiscard]] bool cover(LeakageShare& share, const std::vector<Stands>& worst, std::size_t own) const;
   [[nodiscard]] std::vector<Stands> worst_stands(Stands rest, std::span<const std::size_t> still) const;
   [[nodiscard]] std::string place_text(std::size_t mover, Stand stand) const;
   [[nodiscard]] std::string where_text(const Stands& worst, std::span<const std::size_t> still) const;
