@@ -18,6 +18,7 @@ constexpr double same_lsb = 1e-4;
 constexpr double rounding = 1e-11;   // of the reading: what is left of nothing
 constexpr double no_effect = 1e-13;  // of the range
 constexpr double worth_telling = 1.01;
+constexpr double unfelt_lsb = 1e-6;  // of one leakage: a hundred of them are still nothing
 constexpr double same_share = 1e-9;
 constexpr double uneven = 0.05;
 
@@ -125,7 +126,10 @@ std::optional<Influence::Reading> Influence::read(const Stands& stands, const Sc
   for (std::size_t k = 0; k < scales.size(); ++k)
     for (const double sign : {1.0, -1.0, 0.0}) {
       leak(k, sign);
-      if (sign != 0) (sign > 0 ? reading.plus : reading.minus).push_back(solve() - reading.own);
+      if (scales[k] == 0)
+        (sign > 0 ? reading.plus : reading.minus).resize(k + 1);
+      else if (sign != 0)
+        (sign > 0 ? reading.plus : reading.minus).push_back(solve() - reading.own);
     }
   for (const bool up : {true, false}) {
     for (std::size_t k = 0; k < scales.size(); ++k) leak(k, (reading.plus[k] > 0) == up ? 1 : -1);
@@ -156,15 +160,15 @@ bool Influence::stand_still(std::span<const std::size_t> movers) const {
 
 // What a leakage alone adds goes one way with each sensor (linear-fractional, and the divisor keeps its sign): its
 // largest is where each stands at the end that makes it larger.
-std::vector<Influence::Stands> Influence::worst_stands(Stands rest, std::span<const std::size_t> still) const {
-  std::vector<Stands> worst(probed_.leakages.size(), rest);
-  const Scales unscaled(worst.size(), 1.0);
+std::vector<Influence::Stands> Influence::worst_stands(const Scales& felt, std::span<const std::size_t> still) const {
+  const Stands rest(moved_.size(), Stand::rest);
+  std::vector<Stands> worst(felt.size(), rest);
   for (const std::size_t mover : still) {
     std::array<std::optional<Reading>, 2> ends;
     for (const bool to : {false, true}) {
       Stands moved = rest;
       moved[mover] = to ? Stand::to : Stand::from;
-      ends[to ? 1 : 0] = read(moved, unscaled);
+      ends[to ? 1 : 0] = read(moved, felt);
     }
     if (!ends[0] || !ends[1]) return {};
     for (std::size_t k = 0; k < worst.size(); ++k)
@@ -176,15 +180,19 @@ std::vector<Influence::Stands> Influence::worst_stands(Stands rest, std::span<co
 std::optional<LeakageShare> Influence::leakage_share(std::size_t own, std::span<const std::size_t> still) const {
   LeakageShare share{std::vector<double>(probed_.leakages.size(), 1.0), {}};
   if (probed_.leakages.empty()) return share;
-  auto worst = worst_stands(Stands(moved_.size(), Stand::rest), still);
+  const auto felt = this->felt(own);
+  if (!felt) return std::nullopt;
+  auto worst = worst_stands(*felt, still);
   if (worst.empty()) return std::nullopt;
   const Stands told = worst[own_leakage()];
+  for (std::size_t k = felt->size(); k-- > 0;)
+    if ((*felt)[k] == 0) worst.erase(worst.begin() + static_cast<std::ptrdiff_t>(k));
   std::sort(worst.begin(), worst.end());
   worst.erase(std::unique(worst.begin(), worst.end()), worst.end());
   constexpr int rounds = 6;  // what one share adds to the range's ends changes the others a little
   for (int i = 0; i < rounds; ++i) {
     const auto before = share.of_each;
-    if (!cover(share, worst, own)) return std::nullopt;
+    if (!cover(share, *felt, worst, own)) return std::nullopt;
     if (share.of_each == before) break;
   }
   if (*std::max_element(share.of_each.begin(), share.of_each.end()) > worth_telling)
@@ -199,23 +207,44 @@ std::size_t Influence::own_leakage() const {
   return 0;
 }
 
+// Which leakages the reading feels (1) and which not (0): on a shared rail most are another divider's alone.
+std::optional<Influence::Scales> Influence::felt(std::size_t own) const {
+  const double least = std::ldexp(unfelt_lsb, -input_->bits);
+  const Scales all(probed_.leakages.size(), 1.0);
+  Scales felt(all.size(), 0.0);
+  for (const Stand stand : {Stand::from, Stand::middle, Stand::to}) {
+    Stands stands(moved_.size(), Stand::rest);
+    stands[own] = stand;
+    const auto reading = read(stands, all);
+    if (!reading) return std::nullopt;
+    for (std::size_t k = 0; k < felt.size(); ++k)
+      if (reading->largest(k) > least) felt[k] = 1;
+  }
+  return felt;
+}
+
 // Raises the shares until what the leakages add with them is as much as at the worst stands. False where it cannot be.
-bool Influence::cover(LeakageShare& share, const std::vector<Stands>& worst, std::size_t own) const {
-  const Scales unscaled(share.of_each.size(), 1.0);
+bool Influence::cover(LeakageShare& share, const Scales& felt, const std::vector<Stands>& worst,
+                      std::size_t own) const {
+  const auto scaled = [&] {
+    Scales scales;
+    for (std::size_t k = 0; k < felt.size(); ++k) scales.push_back(felt[k] * share.of_each[k]);
+    return scales;
+  };
   for (const Stands& stands : worst)
     for (const Stand stand : {Stand::from, Stand::middle, Stand::to}) {
       Stands at_rest(moved_.size(), Stand::rest);
       Stands at = stands;
       at_rest[own] = at[own] = stand;
-      const auto there = read(at, unscaled);
-      auto held = read(at_rest, share.of_each);
+      const auto there = read(at, felt);
+      auto held = read(at_rest, scaled());
       if (!held || !there || !is_even(there->up, there->down) || !is_even(held->up, held->down)) return false;
-      for (std::size_t k = 0; k < unscaled.size(); ++k) {
+      for (std::size_t k = 0; k < felt.size(); ++k) {
         const auto factor = raise({{there->plus[k], held->plus[k]}, {there->minus[k], held->minus[k]}});
         if (!factor) return false;
         share.of_each[k] *= *factor;
       }
-      held = read(at_rest, share.of_each);
+      held = read(at_rest, scaled());
       const auto factor = held ? raise({{there->up, held->up}, {there->down, held->down}}) : std::nullopt;
       if (!factor) return false;
       for (double& one : share.of_each) one *= *factor;

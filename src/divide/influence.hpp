@@ -62,14 +62,16 @@ class Influence {
 
     [[nodiscard]] double largest(std::size_t leakage) const;
   };
-  using Scales = std::vector<double>;  // of the leakages; empty: no leakage is wanted
+  using Scales = std::vector<double>;  // of the leakages; 0, or empty for all: not wanted
 
   Influence(const Subject& subject) : input_(&subject.input) {}
   [[nodiscard]] bool add(const Subject& subject, const model::Sheet& sheet, const Mover& mover);
   [[nodiscard]] std::optional<Reading> read(const Stands& stands, const Scales& scales) const;
   [[nodiscard]] std::size_t own_leakage() const;
-  [[nodiscard]] bool cover(LeakageShare& share, const std::vector<Stands>& worst, std::size_t own) const;
-  [[nodiscard]] std::vector<Stands> worst_stands(Stands rest, std::span<const std::size_t> still) const;
+  [[nodiscard]] std::optional<Scales> felt(std::size_t own) const;
+  [[nodiscard]] bool cover(LeakageShare& share, const Scales& felt, const std::vector<Stands>& worst,
+                           std::size_t own) const;
+  [[nodiscard]] std::vector<Stands> worst_stands(const Scales& felt, std::span<const std::size_t> still) const;
   [[nodiscard]] std::string place_text(std::size_t mover, Stand stand) const;
   [[nodiscard]] std::string where_text(const Stands& worst, std::span<const std::size_t> still) const;
 
