@@ -1,6 +1,7 @@
 #include <algorithm>
 #include <unordered_map>
 #include <unordered_set>
+#include <vector>
 
 #include "divide/arms.hpp"
 
@@ -81,10 +82,47 @@ class Sorter {
     for (std::size_t i = 0; i <= arms_.tap; ++i)
       for (const OffWalk& off : walk_.off[i]) {
         const auto& rails = off.kept.rails;
-        if (rails.empty() || !std::all_of(rails.begin(), rails.end(), [&](Node rail) { return rail == rails.front(); }))
-          continue;
-        for (const Edge edge : off.kept.edges) of_branch_.emplace(edge, side_of_rail(rails.front()));
+        if (rails.empty()) continue;
+        const bool one = std::all_of(rails.begin(), rails.end(), [&](Node rail) { return rail == rails.front(); });
+        for (const Edge edge : off.kept.edges)
+          of_branch_.emplace(edge, one ? side_of_rail(rails.front()) : side_in(off.kept, edge));
       }
+  }
+
+  // In a branch that leads to several rails: a part that alone joins one of them to the tap is on that rail's side; the
+  // stem that they share feeds the tap from the side where the sensor is not.
+  model::Arm side_in(const Region& branch, Edge edge) {
+    for (std::size_t i = 0; i < 2; ++i)
+      if (const Rail* rail = graph_.rails().at(graph_.pin(edge, i))) return side_of_rail(rail);
+    constexpr std::size_t most_searched = 200;  // edges: each is looked at from each
+    for (std::size_t i = 0; i < 2 && branch.edges.size() <= most_searched; ++i)
+      if (const auto rails = rails_behind(branch, graph_.pin(edge, i), edge); rails.size() == 1)
+        return side_of_rail(*rails.begin());
+    return *sides_.sensor_arm == model::Arm::upper ? model::Arm::lower : model::Arm::upper;
+  }
+
+  // The rails to which a node of a branch leads without one of its edges; none where it then leads to the walk as well.
+  [[nodiscard]] std::unordered_set<const Rail*> rails_behind(const Region& branch, Node from, Edge without) const {
+    std::unordered_set<const Rail*> rails;
+    std::unordered_set<Node> seen(walk_.nodes.begin(), walk_.nodes.end());
+    if (!seen.insert(from).second) return rails;
+    std::vector<Node> open{from};
+    while (!open.empty()) {
+      const Node node = open.back();
+      open.pop_back();
+      for (const Edge edge : branch.edges) {
+        const Node a = graph_.pin(edge, 0);
+        const Node b = graph_.pin(edge, 1);
+        if (edge == without || (a != node && b != node)) continue;
+        const Node next = a == node ? b : a;
+        if (std::find(walk_.nodes.begin(), walk_.nodes.end(), next) != walk_.nodes.end()) return {};
+        if (const Rail* rail = graph_.rails().at(next))
+          rails.insert(rail);
+        else if (seen.insert(next).second)
+          open.push_back(next);
+      }
+    }
+    return rails;
   }
 
   // Ties are settled by the order of nodes, so that a report does not depend on addresses.

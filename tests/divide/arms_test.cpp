@@ -361,3 +361,9 @@ TEST_CASE("a sensor's own model of a source that follows its ammeter to ground i
   REQUIRE(board.only().sensor_form);
   CHECK(board.only().sensor_form->source_ohms == Approx(10e3).epsilon(1e-12));
 }
+
+TEST_CASE("a pull-up from a supply behind a resistance that others share is on the supply's side") {
+  const auto board = board_of("V1 V33 0 3.3\nRF V33 VCC 0.2\nR1 VCC A 10k\nRT A 0 10k\nR2 VCC B 10k\nR3 B 0 10k\n",
+                              converter("\"A\"") + ntc("RT"));
+  CHECK(drawn(board, board.at("A")) == "V33 > RF R1 > A > RT R2 R3 > 0");
+}
