@@ -36,8 +36,8 @@ struct Prepared {
                                                     const model::Plan& plan, const model::Solution& whole,
                                                     const model::Solution* bare);
 
-// Why the readings of a sweep are none, as a sentence: the converter's range turns over within it, in any condition that
-// was solved. Empty where it does not.
+// Why the readings of a sweep are none, as a sentence: the converter's range turns over within it, in any condition
+// that was solved. Empty where it does not.
 [[nodiscard]] std::string turning_range(const judge::Solved& solved);
 
 // Ends of the range that are nets inside a network are nominally what they are in the middle of the sweep; those on a

@@ -114,8 +114,8 @@ struct Divider {
   std::optional<OnePort>
       sensor_form;          // the same where only the sensor itself is not linear: tells what resistance it amounts to
   std::vector<NetId> nets;  // of the whole network, rails left out
-  // "RT2 at 25 degC": where other sensors on the network stand while this one is swept; the reading is the same wherever
-  // they do.
+  // "RT2 at 25 degC": where other sensors on the network stand while this one is swept; the reading is the same
+  // wherever they do.
   std::vector<std::string> held;
   // "VDD at 2 V": where other sensors on the network make a leakage count more than where they are held; empty where
   // none does. leakage_amperes are the declared ones times that.

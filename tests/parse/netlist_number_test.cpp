@@ -1,10 +1,9 @@
-#include "parse/cards/number.hpp"
-
 #include <fmt/format.h>
 #include <random>
 
 #include <catch2/catch.hpp>
 
+#include "parse/cards/number.hpp"
 #include "parse/quantity.hpp"
 
 TEST_CASE("netlist numbers: plain forms have the value that their decimal text has") {
