@@ -50,6 +50,8 @@ Json divider_of(const model::Divider& divider, const model::BoardReport& board) 
     put(out, "short_volts", divider.bare_form->short_volts);
     put(out, "source_ohms", divider.bare_form->source_ohms);
   }
+  if (!divider.held.empty()) out["held"] = divider.held;
+  put(out, "leakage_counted_with", divider.leakage_where);
   return out;
 }
 
