@@ -1,33 +1,10 @@
 #include "divide/nodes.hpp"
 
 #include <numeric>
-#include <utility>
+
+#include "base/disjoint_sets.hpp"
 
 namespace divide {
-namespace {
-
-class Union {
- public:
-  explicit Union(std::size_t size) : parent_(size) { std::iota(parent_.begin(), parent_.end(), std::uint32_t{0}); }
-
-  std::uint32_t find(std::uint32_t at) {
-    while (parent_[at] != at) at = parent_[at] = parent_[parent_[at]];
-    return at;
-  }
-
-  // The smaller index stays the root: ground stays 0, and nodes come in the netlist's order.
-  void join(std::uint32_t a, std::uint32_t b) {
-    a = find(a);
-    b = find(b);
-    if (a > b) std::swap(a, b);
-    parent_[b] = a;
-  }
-
- private:
-  std::vector<std::uint32_t> parent_;
-};
-
-}  // namespace
 
 bool is_short(const model::Part& part) {
   if (std::holds_alternative<model::Inductor>(part)) return true;
@@ -36,7 +13,7 @@ bool is_short(const model::Part& part) {
 }
 
 Nodes::Nodes(const model::Circuit& circuit, const Board& board) : node_of_net_(circuit.nets.size()) {
-  Union joined(circuit.nets.size());
+  base::DisjointSets joined(circuit.nets.size());
   for (std::size_t i = 0; i < circuit.elements.size(); ++i) {
     const auto& element = circuit.elements[i];
     if (!board.removed[i] && element.pin_count >= 2 && is_short(element.part))

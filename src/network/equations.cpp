@@ -4,7 +4,7 @@
 #include <cmath>
 #include <variant>
 
-#include "network/groups.hpp"
+#include "base/disjoint_sets.hpp"
 
 namespace network {
 namespace {
@@ -64,7 +64,7 @@ class Maker {
       if (!resistor && !current && !controlled && as<model::VoltageSource>(branch) == nullptr) continue;
       if (!current) reach_.join(node(branch, 0), node(branch, 1));
       const std::size_t pins = as<model::VoltageControlled>(branch) != nullptr ? 4 : 2;
-      for (std::size_t pin = 0; pin < pins; ++pin) touched[shorts_.of(node(branch, pin))] = true;
+      for (std::size_t pin = 0; pin < pins; ++pin) touched[shorts_.find(node(branch, pin))] = true;
     }
   }
 
@@ -74,10 +74,10 @@ class Maker {
     made_.slot_of_node.assign(network_.node_count, 0);
     made_.reached.assign(network_.node_count, true);
     for (std::uint32_t n = 1; n < network_.node_count; ++n) {
-      const std::uint32_t first = shorts_.of(n);
+      const std::uint32_t first = shorts_.find(n);
       if (first != 0) made_.reached[n] = touched[first];
       if (first == 0 || !touched[first]) continue;
-      if (reach_.of(n) != 0) return floats;
+      if (reach_.find(n) != 0) return floats;
       made_.slot_of_node[n] = first == n ? made_.slots++ : made_.slot_of_node[first];
     }
     made_.node_slots = made_.slots;
@@ -141,8 +141,8 @@ class Maker {
 
   const model::Network& network_;
   const Values& values_;
-  Groups shorts_;  // once nodes are numbered, joined further by the voltage sources seen so far
-  Groups reach_;
+  base::DisjointSets shorts_;  // once nodes are numbered, joined further by the voltage sources seen so far
+  base::DisjointSets reach_;
   std::vector<Slot> current_of_;
   Equations made_;
 };

@@ -4,6 +4,7 @@
 #include <numeric>
 #include <string_view>
 
+#include "base/disjoint_sets.hpp"
 #include "base/overloaded.hpp"
 #include "simulate/deck.hpp"
 #include "simulate/device_card.hpp"
@@ -175,7 +176,7 @@ std::optional<std::string> DeckWriter::check_values() const {
 // copy.
 void DeckWriter::settle_shorts() {
   const model::Network& network = plan_->network;
-  NodeSets sets(network.node_count);
+  base::DisjointSets sets(network.node_count);
   for (std::size_t b = 0; b < network.branches.size(); ++b) {
     const model::Branch& branch = network.branches[b];
     const bool resistor = is_resistor(branch);
@@ -272,7 +273,7 @@ std::vector<std::uint32_t> DeckWriter::roots_of(std::size_t copy) const {
       std::none_of(perhaps_zero_.begin(), perhaps_zero_.end(), [&](std::size_t b) { return value(b, copy) == 0; });
   if (none_zero) return {};
   const model::Network& network = plan_->network;
-  NodeSets sets(network.node_count);
+  base::DisjointSets sets(network.node_count);
   for (std::uint32_t node = 0; node < network.node_count; ++node) sets.join(node, roots_[node]);
   for (const std::size_t b : perhaps_zero_) {
     if (value(b, copy) == 0) sets.join(network.branches[b].nodes[0].value, network.branches[b].nodes[1].value);

@@ -1,33 +1,12 @@
 #include "simulate/topology.hpp"
 
-#include <numeric>
 #include <unordered_set>
 #include <utility>
 
+#include "base/disjoint_sets.hpp"
 #include "base/overloaded.hpp"
 
 namespace simulate {
-
-NodeSets::NodeSets(std::uint32_t nodes) : parent_(nodes) {
-  std::iota(parent_.begin(), parent_.end(), 0U);
-}
-
-std::uint32_t NodeSets::find(std::uint32_t node) {
-  while (parent_[node] != node) {
-    parent_[node] = parent_[parent_[node]];
-    node = parent_[node];
-  }
-  return node;
-}
-
-bool NodeSets::join(std::uint32_t a, std::uint32_t b) {
-  a = find(a);
-  b = find(b);
-  if (a == b) return false;
-  if (b < a) std::swap(a, b);
-  parent_[b] = a;
-  return true;
-}
 
 bool sets_voltage(const model::Branch& branch) {
   return std::visit(base::overloaded{
@@ -41,7 +20,7 @@ bool sets_voltage(const model::Branch& branch) {
 }
 
 bool has_voltage_loop(const model::Network& network, std::span<const std::uint32_t> roots) {
-  NodeSets sets(network.node_count);
+  base::DisjointSets sets(network.node_count);
   for (const model::Branch& branch : network.branches) {
     if (!sets_voltage(branch)) continue;
     const std::uint32_t a = roots[branch.nodes[0].index()];
@@ -150,7 +129,7 @@ class Conduction {
   const model::Network& network_;
   const model::Circuit& circuit_;
   std::span<const std::uint32_t> roots_;
-  NodeSets sets_;
+  base::DisjointSets sets_;
 };
 
 }  // namespace

@@ -10,19 +10,6 @@
 
 namespace simulate {
 
-// Sets of nodes that only ever grow together. The smallest node of a set stands for it, so ground stands for its own.
-class NodeSets {
- public:
-  explicit NodeSets(std::uint32_t nodes);
-
-  [[nodiscard]] std::uint32_t find(std::uint32_t node);
-  // Makes the sets of a and b one; false when they were one already.
-  bool join(std::uint32_t a, std::uint32_t b);
-
- private:
-  std::vector<std::uint32_t> parent_;
-};
-
 // Whether a branch drives a voltage between its first two nodes: a voltage source of any kind.
 [[nodiscard]] bool sets_voltage(const model::Branch& branch);
 

@@ -28,16 +28,6 @@ bool loops(const Board& board) {
 
 }  // namespace
 
-TEST_CASE("the smallest node stands for a set, so that ground stands for its own") {
-  simulate::NodeSets sets(6);
-  CHECK(sets.join(5, 3));
-  CHECK(sets.join(3, 1));
-  CHECK_FALSE(sets.join(1, 5));
-  CHECK(sets.find(5) == 1);
-  CHECK(sets.join(5, 0));
-  CHECK(sets.find(3) == 0);
-}
-
 TEST_CASE("resistors and voltage sources lead to ground, capacitors and current sources do not") {
   const auto good = [] {
     Board board;
